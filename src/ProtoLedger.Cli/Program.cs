@@ -1,0 +1,3 @@
+using System.CommandLine;
+
+return await new RootCommand("Tools of an installation of ProtoLedger.").Parse(args).InvokeAsync();

@@ -1,0 +1,2 @@
+Console.Error.WriteLine("Name a benchmark.");
+return 2;

@@ -1,0 +1,68 @@
+using System.Globalization;
+using System.Text;
+
+namespace ProtoLedger.Reports.Wording;
+
+/// <summary>Makes text that people typed safe to stand in a report: it is shown, and does nothing.</summary>
+internal static class UserText
+{
+    /// <summary>Characters that Markdown reads as markup anywhere in a line.</summary>
+    private const string Markup = "\\`*_[]<>&|~!^${}@";
+
+    /// <summary>The text on one line, with direction overrides, zero-width and control characters shown by their code point.</summary>
+    public static string Visible(string text)
+    {
+        var shown = new StringBuilder(text.Length);
+        var space = false;
+        foreach (var rune in text.EnumerateRunes())
+        {
+            if (Rune.IsWhiteSpace(rune) || rune.Value is '\r' or '\n' or '\t')
+            {
+                space = shown.Length > 0;
+                continue;
+            }
+
+            if (space)
+                shown.Append(' ');
+            space = false;
+            if (IsHidden(rune))
+                shown.Append(CultureInfo.InvariantCulture, $"\u27E8U+{rune.Value:X4}\u27E9");
+            else
+                shown.Append(rune.ToString());
+        }
+
+        return shown.ToString();
+    }
+
+    /// <summary>The text as literal Markdown, fit for a paragraph, a list item or a table cell.</summary>
+    public static string Literal(string text)
+    {
+        var visible = Visible(text);
+        var literal = new StringBuilder(visible.Length + 8);
+        foreach (var character in visible)
+        {
+            if (Markup.Contains(character, StringComparison.Ordinal))
+                literal.Append('\\');
+            literal.Append(character);
+        }
+
+        return EscapeBlockStart(literal.ToString());
+    }
+
+    /// <summary>A list marker, heading, rule or numbered item means something only where a block begins.</summary>
+    private static string EscapeBlockStart(string text)
+    {
+        if (text.Length == 0)
+            return text;
+        if (text[0] is '#' or '+' or '-' or '=' or ':')
+            return "\\" + text;
+        var digits = text.TakeWhile(char.IsAsciiDigit).Count();
+        return digits > 0 && digits < text.Length && text[digits] is '.' or ')' && digits > 0
+            ? text.Insert(digits, "\\")
+            : text;
+    }
+
+    private static bool IsHidden(Rune rune) =>
+        Rune.GetUnicodeCategory(rune) is UnicodeCategory.Control or UnicodeCategory.Format
+            or UnicodeCategory.PrivateUse or UnicodeCategory.OtherNotAssigned or UnicodeCategory.Surrogate;
+}

@@ -4,7 +4,12 @@ namespace ProtoLedger.Physics.Qualification;
 public static class Qualifier
 {
     /// <summary>Every family the engine has. A new family is one class and one line here.</summary>
-    private static readonly Dictionary<string, IQualificationFamily> Families = [];
+    private static readonly Dictionary<string, IQualificationFamily> Families = new IQualificationFamily[]
+    {
+        new InversionPulsesFamily(),
+        new SliceProfileFamily(),
+        new FatSaturationFamily(),
+    }.ToDictionary(f => f.Name);
 
     /// <summary>Computes every case of a file.</summary>
     /// <param name="file">The file.</param>

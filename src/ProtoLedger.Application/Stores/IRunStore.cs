@@ -63,7 +63,7 @@ public interface IRunStore
     /// <param name="cancellationToken">Stops it.</param>
     Task<bool> PlanAsync(RunJob job, string modelId, byte[] inputs, IReadOnlyList<string> shards, DateTime startedAt, CancellationToken cancellationToken);
 
-    /// <summary>Writes result rows by binary copy; an observable list is stored once by hash.</summary>
+    /// <summary>Writes result rows by binary copy; their lists of observables are blobs stored before.</summary>
     /// <param name="rows">Rows of one run.</param>
     /// <param name="cancellationToken">Stops it.</param>
     Task AddResultsAsync(IReadOnlyList<ResultRow> rows, CancellationToken cancellationToken);
@@ -73,11 +73,6 @@ public interface IRunStore
     /// <param name="protocol">Protocol, or null for all.</param>
     /// <param name="cancellationToken">Stops it.</param>
     Task<IReadOnlyList<ResultRow>> ResultsAsync(long run, string? protocol, CancellationToken cancellationToken);
-
-    /// <summary>Text of an observable list, or null.</summary>
-    /// <param name="sha256">Hash.</param>
-    /// <param name="cancellationToken">Stops it.</param>
-    Task<byte[]?> ObservablesAsync(byte[] sha256, CancellationToken cancellationToken);
 
     /// <summary>Stores the findings and the summary and completes the run.</summary>
     /// <param name="run">Run with its final values.</param>

@@ -1,0 +1,4 @@
+SELECT sha256, account, kind, label, scopes, created_at, last_used_at, expires_at, ended_at
+FROM token
+WHERE account = @account AND kind = 'api'
+ORDER BY created_at DESC

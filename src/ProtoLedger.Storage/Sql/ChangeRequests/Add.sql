@@ -1,0 +1,3 @@
+INSERT INTO change_request (kind, document_id, base_version, bytes, sha256, reason, author, author_name, state, row_version, round, created_at, submitted_at, decided_at, decided_by, decision_reason, version, imported, source, run_id)
+VALUES (@kind, @documentId, @baseVersion, @bytes, @sha256, @reason, @author, @authorName, @state, @rowVersion, @round, @createdAt, @submittedAt, @decidedAt, @decidedBy, @decisionReason, @version, @imported, @source, @runId)
+RETURNING id

@@ -1,0 +1,2 @@
+INSERT INTO loaded_fact (protocol, version, scanner, step, account, recorded_at)
+VALUES (@protocol, @version, @scanner, @step, @account, @at)

@@ -1,0 +1,9 @@
+WITH intervals AS (
+    SELECT kind, document_id, version, scanner, valid_from, recorded_at, recorded_by, change_request_id, imported, number,
+           lead(valid_from) OVER (PARTITION BY kind, document_id, scanner ORDER BY valid_from, number) AS valid_until
+    FROM effective_fact
+)
+SELECT kind, document_id, version, scanner, valid_from, valid_until, recorded_at, recorded_by, change_request_id, imported
+FROM intervals
+WHERE valid_until IS DISTINCT FROM valid_from AND valid_from <= @at AND (valid_until IS NULL OR valid_until > @at)
+ORDER BY kind, document_id, scanner, valid_from

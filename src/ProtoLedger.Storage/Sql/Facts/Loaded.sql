@@ -1,0 +1,4 @@
+SELECT protocol, version, scanner, step, account, recorded_at AS at
+FROM loaded_fact
+WHERE protocol = @protocol
+ORDER BY number

@@ -1,0 +1,3 @@
+SELECT request_sha256, response, created_at
+FROM idempotency
+WHERE account = @account AND key = @key

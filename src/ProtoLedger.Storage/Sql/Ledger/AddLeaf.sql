@@ -1,0 +1,2 @@
+INSERT INTO ledger_leaf (sequence, bytes, hash)
+VALUES (@sequence, @bytes, @hash)

@@ -1,0 +1,3 @@
+SELECT bytes
+FROM blob
+WHERE sha256 = @sha256

@@ -1,0 +1,4 @@
+SELECT size, root, note, created_at
+FROM ledger_checkpoint
+ORDER BY size DESC
+LIMIT 1

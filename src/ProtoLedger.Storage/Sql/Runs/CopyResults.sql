@@ -1,0 +1,2 @@
+COPY run_result (run, protocol, version, change_request_id, scanner, document_sha256, input_sha256, observables_sha256, nominal, low, high, probability, verdict, nominal_verdict, packed_sha256)
+FROM STDIN (FORMAT BINARY)

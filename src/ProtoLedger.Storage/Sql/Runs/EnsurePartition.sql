@@ -1,0 +1,1 @@
+SELECT ensure_run_result_partition(@run)

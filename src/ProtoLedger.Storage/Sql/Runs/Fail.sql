@@ -1,0 +1,3 @@
+UPDATE run
+SET state = 'failed', finished_at = now()
+WHERE id = @run

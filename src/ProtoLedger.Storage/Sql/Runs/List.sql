@@ -1,0 +1,5 @@
+SELECT id, cause, change_request_id, state, model_id, inputs_sha256, queued_at, started_at, finished_at, versions, proposals, results, shared, moved, newly_failing, newly_holding, failed_shards, findings_sha256
+FROM run
+WHERE @before::bigint IS NULL OR id < @before
+ORDER BY id DESC
+LIMIT @limit

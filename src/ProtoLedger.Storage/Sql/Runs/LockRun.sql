@@ -1,0 +1,4 @@
+SELECT id
+FROM run
+WHERE id = @run
+FOR UPDATE

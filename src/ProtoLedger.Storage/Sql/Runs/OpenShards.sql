@@ -1,0 +1,3 @@
+SELECT count(*)
+FROM run_job
+WHERE run = @run AND stage = 'shard' AND state = 'queued'

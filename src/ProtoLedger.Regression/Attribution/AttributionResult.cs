@@ -1,3 +1,5 @@
+using ProtoLedger.Protocols.Comparison;
+using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Regression.Evaluation;
 
 namespace ProtoLedger.Regression.Attribution;
@@ -28,11 +30,7 @@ public sealed record AttributionResult(
 public sealed record AttributionShare(IReadOnlyList<ChangedParameter> Changes, double Share, double StandardError);
 
 /// <summary>One changed parameter of any document that predictions depend on.</summary>
-/// <param name="Document">protocol, scanner, conditions, catalogue or expectations.</param>
-/// <param name="Pointer">JSON pointer in that document.</param>
-/// <param name="Name">Parameter name as documents spell it, such as RepetitionTime.</param>
-/// <param name="Where">Series or tissue that it belongs to, or null.</param>
-/// <param name="Old">Canonical JSON text of the old value, null where it is added.</param>
-/// <param name="New">Canonical JSON text of the new value, null where it is removed.</param>
-/// <param name="Unit">Unit, or null.</param>
-public sealed record ChangedParameter(string Document, string Pointer, string Name, string? Where, string? Old, string? New, string? Unit);
+/// <param name="Document">Kind of the document.</param>
+/// <param name="DocumentId">Identifier of the document.</param>
+/// <param name="Change">The change: pointer, name, label, unit, old and new value.</param>
+public sealed record ChangedParameter(DocumentKind Document, string DocumentId, ParameterChange Change);

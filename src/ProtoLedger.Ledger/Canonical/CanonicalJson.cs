@@ -67,8 +67,11 @@ internal static class CanonicalJson
             case JsonValue value when value.GetValueKind() == JsonValueKind.String:
                 Write(value.GetValue<string>(), text);
                 break;
-            case JsonValue value when value.GetValueKind() == JsonValueKind.Number && value.TryGetValue<long>(out var number):
+            case JsonValue value when value.TryGetValue<long>(out var number):
                 text.Append(Checked(number).ToString(CultureInfo.InvariantCulture));
+                break;
+            case JsonValue value when value.TryGetValue<int>(out var number):
+                text.Append(number.ToString(CultureInfo.InvariantCulture));
                 break;
             default:
                 throw new ArgumentException("Only objects, arrays, strings and whole numbers occur here.");

@@ -52,6 +52,11 @@ internal static class Der
             var tag = reader.PeekTag();
             if (tag.IsConstructed)
             {
+                if (tag.TagClass == TagClass.Universal && !tag.HasSameClassAndValue(Asn1Tag.SetOf) && !tag.HasSameClassAndValue(Asn1Tag.Sequence))
+                {
+                    throw new AsnContentException("Only sequences and sets are constructed in DER.");
+                }
+
                 // A set is written in the order of its members' bytes; the reader checks that for universal sets.
                 Walk(tag.HasSameClassAndValue(Asn1Tag.SetOf) ? reader.ReadSetOf() : reader.ReadSequence(tag), depth + 1);
             }

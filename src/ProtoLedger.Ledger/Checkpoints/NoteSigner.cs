@@ -37,13 +37,7 @@ public sealed class NoteSigner
     public SignedNote Sign(Checkpoint checkpoint)
     {
         ArgumentNullException.ThrowIfNull(checkpoint);
-        if (PublicKey.IsWitness)
-        {
-            throw new InvalidOperationException("A witness's key only cosigns.");
-        }
-
-        var text = checkpoint.ToNoteText();
-        return new SignedNote(text, [new NoteSignature(PublicKey.Name, PublicKey.Id, Ed25519.Sign(seed, Encoding.UTF8.GetBytes(text)))]);
+        return SignText(checkpoint.ToNoteText());
     }
 
     /// <summary>Cosigns a note as a witness at a time (whole seconds are signed).</summary>
@@ -61,6 +55,12 @@ public sealed class NoteSigner
         Ed25519.Sign(seed, NoteKey.CosignedMessage(note.Text, seconds)).CopyTo(signature, 8);
         return new NoteSignature(PublicKey.Name, PublicKey.Id, signature);
     }
+
+    /// <summary>Signs a text that ends in a line feed.</summary>
+    internal SignedNote SignText(string text) =>
+        PublicKey.IsWitness
+            ? throw new InvalidOperationException("A witness's key only cosigns.")
+            : new SignedNote(text, [new NoteSignature(PublicKey.Name, PublicKey.Id, Ed25519.Sign(seed, Encoding.UTF8.GetBytes(text)))]);
 
     private static byte[] Checked(ReadOnlySpan<byte> seed) =>
         seed.Length == Ed25519.KeyLength

@@ -1,3 +1,7 @@
 using System.CommandLine;
+using ProtoLedger.Cli;
 
-return await new RootCommand("Tools of an installation of ProtoLedger.").Parse(args).InvokeAsync();
+return await new RootCommand("Tools of an installation of ProtoLedger.")
+{
+    QualifyCommand.Create(),
+}.Parse(args).InvokeAsync();

@@ -1,0 +1,40 @@
+using System.ComponentModel.DataAnnotations;
+
+namespace ProtoLedger.Server.Hosting;
+
+/// <summary>Settings under the section ProtoLedger: environment variables ProtoLedger__Name or the command line.</summary>
+internal sealed class ServerOptions
+{
+    public const string Section = "ProtoLedger";
+
+    /// <summary>Folder of the private cluster and of the sealing key.</summary>
+    [Required]
+    public string DataFolder { get; set; } = Storage.Clusters.PrivateClusterOptions.DefaultDataFolder();
+
+    /// <summary>web, worker or all.</summary>
+    [Required]
+    [RegularExpression("web|worker|all")]
+    public string Role { get; set; } = "all";
+
+    /// <summary>Folder whose documents are imported into an empty database; null for the one that comes with the program.</summary>
+    public string? Store { get; set; }
+
+    /// <summary>Whether demo people are made; null means only on the private cluster.</summary>
+    public bool? Demo { get; set; }
+
+    /// <summary>Password of every demo person; null means random.</summary>
+    [MinLength(8)]
+    public string? DemoPassword { get; set; }
+
+    /// <summary>Signing passphrase of every demo signer; null means "sign " and the demo password, or random.</summary>
+    [MinLength(8)]
+    public string? DemoSigningPassphrase { get; set; }
+
+    /// <summary>Workers in this process.</summary>
+    [Range(1, 64)]
+    public int Workers { get; set; } = Math.Max(1, Environment.ProcessorCount - 1);
+
+    public bool ServesWeb => Role is "web" or "all";
+
+    public bool Works => Role is "worker" or "all";
+}

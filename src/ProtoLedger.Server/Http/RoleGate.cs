@@ -1,0 +1,83 @@
+using System.Net.Http.Headers;
+using Microsoft.Net.Http.Headers;
+using ProtoLedger.Application.Accounts;
+using ProtoLedger.Application.Actors;
+
+namespace ProtoLedger.Server.Http;
+
+/// <summary>Finds out who asks, and lets only those pass whom the route's rule allows. A route without a rule lets nobody pass.</summary>
+internal sealed class RoleGate(RequestDelegate next)
+{
+    private const int LongestKey = 200;
+
+    public async Task InvokeAsync(HttpContext context, CurrentCaller current, Authenticate authenticate, RecordDenial denial)
+    {
+        if (context.GetEndpoint() is not RouteEndpoint endpoint)
+        {
+            await next(context);
+            return;
+        }
+
+        var rule = endpoint.Metadata.GetMetadata<RoleRule>();
+        var address = context.Connection.RemoteIpAddress?.ToString();
+        var actor = Actor.Anonymous;
+        if (BearerToken(context.Request) is { } token)
+        {
+            var known = await authenticate.RunAsync(token, context.RequestAborted);
+            if (known.Succeeded)
+                actor = known.Value;
+            else if (rule is not { AllowsAnonymous: true })
+            {
+                await Problems.From(known.Refusal).ExecuteAsync(context);
+                return;
+            }
+        }
+
+        current.Caller = new Caller(actor, null, address);
+        if (rule?.Allows(actor) != true)
+        {
+            await denial.RunAsync(current.Caller, $"{context.Request.Method} {endpoint.RoutePattern.RawText}", context.RequestAborted);
+            await Refuse(actor, rule).ExecuteAsync(context);
+            return;
+        }
+
+        if (endpoint.Metadata.GetMetadata<IdempotencyKeyNeeded>() is not null)
+        {
+            if (IdempotencyKey(context.Request) is not { } key)
+            {
+                await Problems.Of(Problems.KeyMissing, $"Send the header Idempotency-Key with 1 to {LongestKey} printable ASCII characters of your own choice, new for each request, the same when it is repeated.").ExecuteAsync(context);
+                return;
+            }
+
+            current.Caller = current.Caller with { IdempotencyKey = key };
+        }
+
+        await next(context);
+    }
+
+    private static Problem Refuse(Actor actor, RoleRule? rule) =>
+        actor.Credential == Credential.None
+            ? Problems.NeedsSignIn("Sign in with POST /api/v1/session and send the token as Authorization: Bearer.")
+            : Problems.Of(Problems.NotAllowed, (rule, actor.Credential) switch
+            {
+                (null, _) => "No rule allows anybody to use this address.",
+                (_, Credential.Token) => $"An API token with the scopes {string.Join(", ", actor.Scopes ?? [])} does not allow: {rule.Name}.",
+                _ => $"Needed is one of the roles {string.Join(", ", rule.AllowedRoles)}; {actor.Name} has {string.Join(", ", actor.Roles)}.",
+            });
+
+    private static string? BearerToken(HttpRequest request) =>
+        AuthenticationHeaderValue.TryParse(request.Headers[HeaderNames.Authorization], out var header)
+        && header.Scheme.Equals("Bearer", StringComparison.OrdinalIgnoreCase) ? header.Parameter ?? "" : null;
+
+    private static string? IdempotencyKey(HttpRequest request)
+    {
+        var key = request.Headers["Idempotency-Key"].ToString().Trim();
+        return key.Length is > 0 and <= LongestKey && key.All(c => c is > ' ' and <= '~' or ' ') ? key : null;
+    }
+}
+
+/// <summary>Who asks; set by <see cref="RoleGate"/> once for each request.</summary>
+internal sealed class CurrentCaller
+{
+    public Caller Caller { get; set; } = new(Actor.Anonymous);
+}

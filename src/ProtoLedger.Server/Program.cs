@@ -1,4 +1,3 @@
-var builder = WebApplication.CreateBuilder(args);
-var app = builder.Build();
-app.MapGet("/health/live", () => TypedResults.Text("live"));
-await app.RunAsync();
+using ProtoLedger.Server.Hosting;
+
+return await ServerProgram.RunAsync(args);

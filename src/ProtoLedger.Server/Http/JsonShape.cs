@@ -4,6 +4,7 @@ using System.Text.Json;
 using System.Text.Json.Nodes;
 using System.Text.Json.Serialization.Metadata;
 using ProtoLedger.Application.Outcomes;
+using ProtoLedger.Protocols.Canonical;
 
 namespace ProtoLedger.Server.Http;
 

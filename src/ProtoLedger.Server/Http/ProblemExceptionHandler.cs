@@ -1,5 +1,6 @@
 using Microsoft.AspNetCore.Diagnostics;
 using Npgsql;
+using ProtoLedger.Application.Stores;
 
 namespace ProtoLedger.Server.Http;
 
@@ -18,6 +19,7 @@ internal sealed class ProblemExceptionHandler(ILogger<ProblemExceptionHandler> l
         {
             ProblemException known => known.Problem,
             BadHttpRequestException bad => Problems.ForStatus(bad.StatusCode, httpContext.Request.Path),
+            StoreUnavailableException => Problems.DatabaseIsAway(),
             NpgsqlException { IsTransient: true } => Problems.DatabaseIsAway(),
             PostgresException { SqlState: [ '5', '7' or '3', ..] } => Problems.DatabaseIsAway(),
             PostgresException => null,

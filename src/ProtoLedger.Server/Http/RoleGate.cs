@@ -1,6 +1,5 @@
 using System.Net.Http.Headers;
 using Microsoft.Net.Http.Headers;
-using ProtoLedger.Application.Accounts;
 using ProtoLedger.Application.Actors;
 
 namespace ProtoLedger.Server.Http;
@@ -10,7 +9,7 @@ internal sealed class RoleGate(RequestDelegate next)
 {
     private const int LongestKey = 200;
 
-    public async Task InvokeAsync(HttpContext context, CurrentCaller current, Authenticate authenticate, RecordDenial denial)
+    public async Task InvokeAsync(HttpContext context, CurrentCaller current, IIdentification identification)
     {
         if (context.GetEndpoint() is not RouteEndpoint endpoint)
         {
@@ -23,7 +22,7 @@ internal sealed class RoleGate(RequestDelegate next)
         var actor = Actor.Anonymous;
         if (BearerToken(context.Request) is { } token)
         {
-            var known = await authenticate.RunAsync(token, context.RequestAborted);
+            var known = await identification.IdentifyAsync(token, context.RequestAborted);
             if (known.Succeeded)
                 actor = known.Value;
             else if (rule is not { AllowsAnonymous: true })
@@ -36,7 +35,7 @@ internal sealed class RoleGate(RequestDelegate next)
         current.Caller = new Caller(actor, null, address);
         if (rule?.Allows(actor) != true)
         {
-            await denial.RunAsync(current.Caller, $"{context.Request.Method} {endpoint.RoutePattern.RawText}", context.RequestAborted);
+            await identification.RecordDenialAsync(current.Caller, $"{context.Request.Method} {endpoint.RoutePattern.RawText}", context.RequestAborted);
             await Refuse(actor, rule).ExecuteAsync(context);
             return;
         }

@@ -8,6 +8,17 @@ internal sealed class SecurityHeaders(RequestDelegate next)
 
     public Task InvokeAsync(HttpContext context)
     {
+        // When the answer starts, since a problem begins it anew and drops what was set before.
+        context.Response.OnStarting(() =>
+        {
+            Apply(context);
+            return Task.CompletedTask;
+        });
+        return next(context);
+    }
+
+    private static void Apply(HttpContext context)
+    {
         var headers = context.Response.Headers;
         headers.ContentSecurityPolicy = context.GetEndpoint()?.Metadata.GetMetadata<ContentPolicy>()?.Value ?? Policy;
         headers.XContentTypeOptions = "nosniff";
@@ -18,7 +29,6 @@ internal sealed class SecurityHeaders(RequestDelegate next)
         headers["Permissions-Policy"] = "camera=(), microphone=(), geolocation=()";
         if (!context.Request.Path.StartsWithSegments("/static", StringComparison.Ordinal))
             headers.CacheControl = "no-store";
-        return next(context);
     }
 }
 

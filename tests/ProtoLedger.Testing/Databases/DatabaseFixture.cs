@@ -1,5 +1,6 @@
 using System.Diagnostics.CodeAnalysis;
 using Npgsql;
+using ProtoLedger.Storage.Migrations;
 using Xunit;
 
 namespace ProtoLedger.Testing.Databases;
@@ -65,6 +66,7 @@ public class DatabaseFixture : IAsyncLifetime
         var postgres = await PostgresForTests.GetAsync();
         var name = UniqueName();
         await RunAsync(postgres, $"CREATE DATABASE {name} TEMPLATE template0");
+        await Migrator.MigrateAsync(postgres.ConnectionStringFor(name));
         NpgsqlConnection.ClearAllPools();
         return name;
     }

@@ -25,7 +25,7 @@ internal static class ApiDescription
         routes.MapOpenApi("/openapi/{documentName}.json").Needs(RoleRule.Anyone);
         routes.MapScalarApiReference("/api", options => options
                 .WithTitle("ProtoLedger API")
-                .WithDefaultFonts(false)
+                .DisableDefaultFonts()
                 .WithOpenApiRoutePattern("/openapi/v1.json"))
             .Needs(RoleRule.Anyone)
             // The page starts itself with an inline script and styles its parts inline; it loads nothing from elsewhere.

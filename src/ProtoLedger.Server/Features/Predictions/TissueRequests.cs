@@ -25,7 +25,7 @@ internal static class TissueRequests
         _ => Refuse(pointer, tissue, "a name or an object", "A tissue is a name of the catalogue or an object with its values.", errors),
     };
 
-    private static TissueChoice? Given(JsonElement tissue, string pointer, List<FieldError> errors)
+    private static TissueChoice.Given? Given(JsonElement tissue, string pointer, List<FieldError> errors)
     {
         var before = errors.Count;
         foreach (var member in tissue.EnumerateObject().Where(m => !Known.Contains(m.Name)))

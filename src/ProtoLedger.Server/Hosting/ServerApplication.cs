@@ -1,0 +1,86 @@
+using Microsoft.Extensions.FileProviders;
+using Microsoft.Extensions.Options;
+using ProtoLedger.Application.Predictions;
+using ProtoLedger.Protocols.Canonical;
+using ProtoLedger.Server.Features.Documentation;
+using ProtoLedger.Server.Features.Health;
+using ProtoLedger.Server.Features.Predictions;
+using ProtoLedger.Server.Http;
+using ProtoLedger.Storage.Sessions;
+
+namespace ProtoLedger.Server.Hosting;
+
+/// <summary>Puts the server together.</summary>
+internal static class ServerApplication
+{
+    public const string DefaultUrl = "http://127.0.0.1:5080";
+
+    private static readonly Dictionary<string, string> Switches = new()
+    {
+        ["--store"] = $"{ServerOptions.Section}:{nameof(ServerOptions.Store)}",
+        ["--role"] = $"{ServerOptions.Section}:{nameof(ServerOptions.Role)}",
+    };
+
+    /// <summary>A builder with the settings read; the database is not touched yet.</summary>
+    public static WebApplicationBuilder CreateBuilder(string[] args)
+    {
+        var builder = WebApplication.CreateBuilder(new WebApplicationOptions { ContentRootPath = AppContext.BaseDirectory });
+        builder.Configuration.AddCommandLine(args, Switches);
+        builder.Services.AddOptions<ServerOptions>().BindConfiguration(ServerOptions.Section).ValidateDataAnnotations().ValidateOnStart();
+        if (builder.Configuration["urls"] is null && builder.Configuration["http_ports"] is null)
+            builder.WebHost.UseUrls(DefaultUrl);
+        builder.WebHost.ConfigureKestrel(kestrel =>
+        {
+            kestrel.AddServerHeader = false;
+            kestrel.Limits.MaxRequestBodySize = CanonicalJson.MaximumBytes;
+        });
+        builder.Logging.AddFilter("Microsoft.AspNetCore", LogLevel.Warning);
+        builder.Logging.AddFilter("Microsoft.Hosting.Lifetime", LogLevel.Warning);
+        builder.Logging.AddSimpleConsole(console => console.SingleLine = true);
+        return builder;
+    }
+
+    /// <summary>The settings, checked.</summary>
+    /// <exception cref="OptionsValidationException">A setting is not valid; the message names it.</exception>
+    public static ServerOptions ReadOptions(WebApplicationBuilder builder)
+    {
+        using var provider = builder.Services.BuildServiceProvider();
+        return provider.GetRequiredService<IOptions<ServerOptions>>().Value;
+    }
+
+    /// <summary>The application over a database, not started.</summary>
+    public static WebApplication Build(WebApplicationBuilder builder, ServerOptions options, DatabaseAccess database)
+    {
+        var services = builder.Services;
+        services.AddSingleton(database);
+        services.AddSingleton(TimeProvider.System);
+        services.AddSingleton<Readiness>();
+        services.AddProtoLedgerStorage(database.ConnectionString);
+        services.AddHostedService<ClusterGuard>();
+        services.AddSingleton<PredictSeries>();
+        services.AddScoped<CurrentCaller>();
+        services.AddSingleton<IIdentification, NobodyIsKnown>();
+        services.AddScoped(provider => provider.GetRequiredService<CurrentCaller>().Caller);
+        services.ConfigureHttpJsonOptions(json => JsonSettings.Apply(json.SerializerOptions));
+        services.AddExceptionHandler<ProblemExceptionHandler>();
+        services.AddProblemDetails();
+        services.AddApiDescription();
+
+        var app = builder.Build();
+        app.UseMiddleware<SecurityHeaders>();
+        app.UseExceptionHandler();
+        app.UseStatusCodePages(context => Problems.ForStatus(context.HttpContext.Response.StatusCode, context.HttpContext.Request.Path).ExecuteAsync(context.HttpContext));
+        app.UseStaticFiles(new StaticFileOptions { FileProvider = new PhysicalFileProvider(Path.Combine(AppContext.BaseDirectory, "wwwroot")) });
+        app.UseRouting();
+        app.UseMiddleware<RoleGate>();
+        app.MapHealth();
+        if (options.ServesWeb)
+        {
+            app.MapPredictions();
+            app.MapApiDescription();
+            app.MapProblemPages();
+        }
+
+        return app;
+    }
+}

@@ -10,7 +10,7 @@ internal static class Crc32
         var crc = uint.MaxValue;
         foreach (var b in bytes)
         {
-            crc = Table[(byte)(crc ^ b)] ^ crc >> 8;
+            crc = Table[(crc ^ b) & 0xFF] ^ crc >> 8;
         }
 
         return ~crc;

@@ -1,0 +1,102 @@
+using System.Text;
+using ProtoLedger.Ledger.Bundles;
+using ProtoLedger.Ledger.Checkpoints;
+using ProtoLedger.Ledger.Leaves;
+using ProtoLedger.Ledger.Merkle;
+using ProtoLedger.Ledger.Signatures;
+using ProtoLedger.Ledger.Tests.Signatures;
+
+namespace ProtoLedger.Ledger.Tests.Bundles;
+
+/// <summary>A small log of ten facts with two signatures, and the bundle made from it.</summary>
+internal sealed class TestBundle : IDisposable
+{
+    public const string Origin = "linden.example/protoledger";
+
+    private readonly List<byte[]> leaves = [];
+    private readonly List<BundleEntry> entries = [];
+    private readonly Dictionary<string, byte[]> artefacts = new()
+    {
+        ["report.json"] = "{\"verdict\":\"holds\"}"u8.ToArray(),
+        ["report.md"] = "# Report\n"u8.ToArray(),
+    };
+
+    public TestBundle(TestSite? site = null, NoteSigner? log = null)
+    {
+        Site = site ?? new TestSite();
+        Log = log ?? NoteSigner.FromSeed(Origin, Enumerable.Range(1, 32).Select(i => (byte)i).ToArray());
+        for (var i = 0; i < 4; i++)
+        {
+            Content($"{{\"TR\":{9000 - i}}}");
+        }
+
+        Sign(Site.Physicist, "change-request/17");
+        Content("{\"loaded\":1}");
+        Sign(Site.Other, "change-request/18");
+        Content("{\"loaded\":2}");
+        Content("{\"reviewed\":3}");
+        entries.Add(BundleEntry.Page("index.html", "<!doctype html><title>Binder</title>"u8.ToArray()));
+        entries.Add(BundleEntry.Page("history.html", "<!doctype html><title>History</title>"u8.ToArray()));
+    }
+
+    public TestSite Site { get; }
+
+    public NoteSigner Log { get; }
+
+    public List<byte[]> Leaves => leaves;
+
+    public List<BundleEntry> Entries => entries;
+
+    public BundleTrust Trust => new([Site.Authority.Certificate], [Log.PublicKey]);
+
+    public SignedNote CheckpointAt(int size) => CheckpointAt(size, Log);
+
+    public SignedNote CheckpointAt(int size, NoteSigner signer) => signer.Sign(new Checkpoint(Origin, size, RootAt(size)));
+
+    public Digest RootAt(int size) =>
+        leaves.Take(size).Aggregate(CompactRange.Empty, (tree, leaf) => tree.Append(MerkleHash.Leaf(leaf)).Tree).Root();
+
+    public BundleContents Contents() => new(
+        "Brain, standard", "protocol brain-standard, all scanners", CheckpointAt(leaves.Count), Log.PublicKey, leaves,
+        Site.Authority.Certificate, Site.RevocationBytes(), entries);
+
+    public byte[] ToBytes() => ToBytes(Contents());
+
+    public byte[] ToBytes(BundleContents contents)
+    {
+        using var output = new MemoryStream();
+        BundleWriter.WriteAsync(output, contents, Log).GetAwaiter().GetResult();
+        return output.ToArray();
+    }
+
+    public void Dispose() => Site.Dispose();
+
+    public void Content(string json)
+    {
+        var bytes = Encoding.UTF8.GetBytes(json);
+        Append("version-recorded", "t.okafor", "protocol/brain-standard", new() { ["document"] = Digest.Of(bytes) });
+        entries.Add(BundleEntry.Blob(Digest.Of(bytes), _ => ValueTask.FromResult(bytes)));
+    }
+
+    public void Append(string type, string actor, string subject, Dictionary<string, Digest> blobs) =>
+        leaves.Add(new LedgerLeaf(type, 1, TestSite.Signing.AddSeconds(leaves.Count), actor, subject, blobs).ToBytes());
+
+    private void Sign(TestSite.Signer signer, string subject)
+    {
+        var index = leaves.Count;
+        var manifest = signer.Manifest(subject) with
+        {
+            Artefacts = artefacts.ToDictionary(a => a.Key, a => Digest.Of(a.Value)),
+            Checkpoint = new Checkpoint(Origin, index - 1, RootAt(index - 1)),
+        };
+        var (bytes, cms) = (manifest.ToBytes(), signer.Key.Sign(manifest, signer.Certificate));
+        Append("change-request-signed", signer.Certificate.Subject.Account, subject, new()
+        {
+            [BundleNames.Manifest] = Digest.Of(bytes),
+            [BundleNames.SignatureFile] = Digest.Of(cms),
+            [BundleNames.SignerCertificate] = signer.Certificate.Fingerprint,
+        });
+        entries.AddRange(BundleEntry.Signature(index, bytes, cms));
+        entries.AddRange(artefacts.Select(a => BundleEntry.Signed(index, a.Key, _ => ValueTask.FromResult(a.Value))));
+    }
+}

@@ -11,7 +11,7 @@ public sealed record OmissionNote(string Effect, string Text, IReadOnlyList<stri
 /// <param name="Where">Scanner, place or page.</param>
 /// <param name="ByWhom">Role or name.</param>
 /// <param name="When">Before or after what, such as "before approval".</param>
-public sealed record NextStep(string What, string Where, string ByWhom, string When);
+public sealed record ReportStep(string What, string Where, string ByWhom, string When);
 
 /// <summary>A value that the documents leave open, or one that rests on weak evidence.</summary>
 /// <param name="Name">What is assumed.</param>

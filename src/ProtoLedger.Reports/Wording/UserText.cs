@@ -49,17 +49,15 @@ internal static class UserText
         return EscapeBlockStart(literal.ToString());
     }
 
-    /// <summary>A list marker, heading, rule or numbered item means something only where a block begins.</summary>
+    /// <summary>A list marker, heading or rule means something only where a block begins, and only before a blank or its like.</summary>
     private static string EscapeBlockStart(string text)
     {
-        if (text.Length == 0)
+        var sign = text.TakeWhile(char.IsAsciiDigit).Count();
+        if (sign == text.Length)
             return text;
-        if (text[0] is '#' or '+' or '-' or '=' or ':')
-            return "\\" + text;
-        var digits = text.TakeWhile(char.IsAsciiDigit).Count();
-        return digits > 0 && digits < text.Length && text[digits] is '.' or ')' && digits > 0
-            ? text.Insert(digits, "\\")
-            : text;
+        var marker = sign == 0 ? text[0] is '#' or '+' or '-' or '=' : text[sign] is '.' or ')';
+        var marks = marker && (sign + 1 == text.Length || text[sign + 1] == ' ' || text[sign + 1] == text[sign]);
+        return marks ? text.Insert(sign, "\\") : text;
     }
 
     private static bool IsHidden(Rune rune) =>

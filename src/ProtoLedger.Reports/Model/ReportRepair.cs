@@ -9,7 +9,7 @@ namespace ProtoLedger.Reports.Model;
 /// <param name="Changes">Parameters to change, from the proposal's value.</param>
 /// <param name="ProbabilityHolds">Probability that it holds then, in [0, 1].</param>
 /// <param name="Costs">What the repair costs elsewhere, the largest first.</param>
-public sealed record RepairOffer(
+public sealed record ReportRepair(
     string ExpectationTitle,
     string ScannerId,
     string SeriesTitle,

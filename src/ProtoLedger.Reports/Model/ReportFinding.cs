@@ -24,7 +24,7 @@ namespace ProtoLedger.Reports.Model;
 /// <param name="Limit">Its limit in <paramref name="Unit"/>, or null.</param>
 /// <param name="ProbabilityHolds">Probability that it holds after the edit, in [0, 1], or null.</param>
 /// <param name="ReferenceMoved">True where the reference tissue itself changed, so that the ratio alone misleads.</param>
-public sealed record Finding(
+public sealed record ReportFinding(
     string ScannerId,
     string SeriesId,
     string SeriesTitle,

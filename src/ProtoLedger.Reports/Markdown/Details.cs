@@ -1,0 +1,157 @@
+using ProtoLedger.Reports.Model;
+using ProtoLedger.Reports.Plots;
+using ProtoLedger.Reports.Wording;
+
+namespace ProtoLedger.Reports.Markdown;
+
+/// <summary>What stands behind the first screen.</summary>
+internal static partial class Details
+{
+    /// <summary>Heading of the table of predicted numbers.</summary>
+    public const string EffectsHeading = "Predicted effect by tissue and pair";
+
+    public static void Write(MarkdownWriter page, ChangeReport report, ReportFigures figures, ReportWords words)
+    {
+        Appearances(page, report, figures, words);
+        Effects(page.Heading(2, EffectsHeading), report, words);
+        Attributions(page.Heading(2, "Which parameter did it"), report, figures, words);
+        Verdicts(page.Heading(2, "Written expectations"), report, words);
+        Plots(page, "Recovery around the inversion time", figures.RecoveryCurves);
+        Plots(page, "Over off-resonance and B1+", figures.FieldMaps);
+        Repairs(page, report, words);
+        Touched(page.Heading(2, "Other versions that the run touched"), report, words);
+        Assumptions(page.Heading(2, "Assumptions"), report);
+        page.Heading(2, "Cautions").List(Cautions.Of(report, words));
+        Origin(page.Heading(2, "Origin and hashes"), report);
+    }
+
+    private static void Appearances(MarkdownWriter page, ChangeReport report, ReportFigures figures, ReportWords words)
+    {
+        if (report.Appearances.Count == 0)
+            return;
+        page.Heading(2, "Predicted appearance");
+        for (var i = 0; i < report.Appearances.Count; i++)
+        {
+            var appearance = report.Appearances[i];
+            var pictures = figures.Pictures[i];
+            page.Heading(3, $"{UserText.Literal(appearance.SeriesTitle)}, {words.Scanner(appearance.ScannerId)}, {UserText.Literal(appearance.Condition)}")
+                .Paragraph(Reference(pictures.Name, pictures.Title))
+                .Paragraph(UserText.Literal(pictures.Text));
+            if (figures.Signals[i] is { } signals)
+                Plot(page, signals);
+        }
+    }
+
+    private static void Effects(MarkdownWriter page, ChangeReport report, ReportWords words)
+    {
+        if (report.Effects.Count == 0)
+        {
+            page.Paragraph("No predicted number changes.");
+            return;
+        }
+
+        foreach (var series in report.Effects.GroupBy(e => (e.SeriesTitle, e.ScannerId)))
+            page.Heading(3, $"{UserText.Literal(series.Key.SeriesTitle)}, {words.Scanner(series.Key.ScannerId)}")
+                .Table(
+                    ["Number", "Condition", " Old", " New", "Direction", "Share of tissue values"],
+                    series.Select(Effect));
+        page.Paragraph("In brackets: from the 5th to the 95th percentile over plausible tissue values.");
+    }
+
+    private static IReadOnlyList<string> Effect(PredictedEffect effect)
+    {
+        var (old, @new) = ObservableWords.Values(effect.Observable, effect.Before?.Nominal, effect.After?.Nominal, effect.Unit);
+        return
+        [
+            ReportWords.Label(effect.Observable, effect.Subject, effect.Reference),
+            UserText.Literal(effect.Condition),
+            old + Range(effect, effect.Before),
+            @new + Range(effect, effect.After),
+            Mark.Of(effect.Direction).ToString(),
+            effect.Share is { } share ? Numbers.Share(share) : "–",
+        ];
+    }
+
+    private static string Range(PredictedEffect effect, PredictedValue? value)
+    {
+        if (value is null || value.High - value.Low <= 1e-9)
+            return "";
+        var (low, high) = ObservableWords.Values(effect.Observable, value.Low, value.High, effect.Unit == "s" ? "s" : "");
+        return $" ({low} to {high})";
+    }
+
+    private static void Attributions(MarkdownWriter page, ChangeReport report, ReportFigures figures, ReportWords words)
+    {
+        if (report.Attributions.Count == 0)
+        {
+            page.Paragraph("No number changed that could be traced to a parameter.");
+            return;
+        }
+
+        page.Paragraph("Each change of a signed number is divided among the changed parameters, averaged over every order in which they could have been made; parameters that are not valid apart count as one. The parts add up to the change.");
+        for (var i = 0; i < report.Attributions.Count; i++)
+        {
+            var table = report.Attributions[i];
+            page.Heading(3, $"{ReportWords.Label(table.Observable, table.Subject, table.Reference)}: {UserText.Literal(table.SeriesTitle)}, {words.Scanner(table.ScannerId)}, {UserText.Literal(table.Lane)}");
+            var (old, @new) = ObservableWords.Values(table.Observable, table.Before, table.After, table.Unit);
+            var (seen, sees) = ObservableWords.Values(table.Observable, table.MagnitudeBefore, table.MagnitudeAfter, table.Unit);
+            page.Paragraph($"Signed: {old} to {@new}. Without sign, as the image shows it: {seen} to {sees}.{(table.Exact ? "" : " Orders were sampled; the standard error is stated.")}");
+            if (figures.Attributions[i] is { } figure)
+                Plot(page, figure);
+        }
+    }
+
+    private static void Verdicts(MarkdownWriter page, ChangeReport report, ReportWords words)
+    {
+        if (report.Verdicts.Count == 0)
+        {
+            page.Paragraph("No expectation is written for these series. Without one, nothing here says whether the change is acceptable.");
+            return;
+        }
+
+        page.Table(
+            ["Transition", "Expectation", "Why", "Where", "Limit", "Old", "New"],
+            report.Verdicts.Select(v => (IReadOnlyList<string>)
+            [
+                Mark.Of(v.Transition).ToString(),
+                $"{UserText.Literal(v.Title)} ({ReportWords.Code(v.ExpectationId)})",
+                UserText.Literal(v.Why),
+                $"{UserText.Literal(v.SeriesTitle)}, {words.Scanner(v.ScannerId)}, {UserText.Literal(v.Condition)}",
+                $"{(v.AtMost ? "at most" : "at least")} {ObservableWords.WithUnit(Numbers.Setting(v.Limit), v.Unit)}{(v.Paired ? ", new over old" : "")}",
+                State(v.Before, v.Unit),
+                State(v.After, v.Unit),
+            ]));
+        page.Paragraph("Probability: share of plausible tissue values, over the named conditions, for which the expectation holds.");
+    }
+
+    private static string State(VerdictState? state, string unit)
+    {
+        if (state is null)
+            return "none";
+        var value = state.Value is { } v ? $" at {ObservableWords.WithUnit(Numbers.Plain(v), unit)}" : "";
+        var probability = state.Probability is { } p ? $"; probability {Numbers.Probability(p)}" : "";
+        var nominal = state.Value is null ? "" : state.NominalHolds ? "; at mean values it holds" : "; at mean values it fails";
+        return $"{Mark.Of(state.Verdict)}{value}{probability}{nominal}";
+    }
+
+    private static void Plots(MarkdownWriter page, string heading, IReadOnlyList<Figure> figures)
+    {
+        if (figures.Count == 0)
+            return;
+        page.Heading(2, heading);
+        foreach (var figure in figures)
+        {
+            page.Heading(3, UserText.Literal(figure.Title));
+            Plot(page, figure);
+        }
+    }
+
+    /// <summary>A plot, its words, its numbers.</summary>
+    private static void Plot(MarkdownWriter page, Figure figure) =>
+        page.Paragraph(Reference(figure.Name, figure.Title))
+            .Table(
+                [.. figure.Twin.Headings.Select(h => (h.StartsWith(' ') ? " " : "") + UserText.Literal(h))],
+                figure.Twin.Rows.Select(row => (IReadOnlyList<string>)[.. row.Select(UserText.Literal)]));
+
+    private static string Reference(string name, string title) => $"![{UserText.Literal(title)}](figures/{name})";
+}

@@ -4,4 +4,5 @@ using ProtoLedger.Cli;
 return await new RootCommand("Tools of an installation of ProtoLedger.")
 {
     QualifyCommand.Create(),
+    VerifyCommand.Create(),
 }.Parse(args).InvokeAsync();

@@ -25,13 +25,15 @@ public readonly record struct SliceFit(double BusyTime, int SlicesPerConcatenati
     /// <summary>Counts what one slice plays.</summary>
     /// <param name="series">The series; a 3D series holds one slab.</param>
     /// <remarks>
-    /// While one slice waits for its inversion time, others are inverted or read, so an inversion counts with its pulse alone; a T2 preparation and a spectral
-    /// saturation or inversion count whole, since nothing can be read during them. Source: arithmetic (derived).
+    /// While one slice waits for its inversion time, others are inverted or read, so an inversion counts with its pulse alone, unless its time is too short to
+    /// hold another slice's readout: then it is spent waiting and counts whole, as do a T2 preparation and a spectral saturation or inversion.
+    /// A necessary condition; a console may need more. Source: arithmetic (derived).
     /// </remarks>
     public static SliceFit Of(Series series)
     {
         ArgumentNullException.ThrowIfNull(series);
-        var busy = series.Preparations.Sum(Occupied) + ReadoutDuration(series);
+        var readout = ReadoutDuration(series);
+        var busy = series.Preparations.Sum(preparation => Occupied(preparation, readout)) + readout;
         var slices = series.Geometry.Dimensions == 3 ? 1 : series.Timing.Slices;
         var each = (slices + series.Timing.Concatenations - 1) / series.Timing.Concatenations;
         var available = series.Readout.RepetitionTime;
@@ -39,16 +41,19 @@ public readonly record struct SliceFit(double BusyTime, int SlicesPerConcatenati
         return new SliceFit(busy, each, each * busy, available, atMost == 0 ? 0 : (slices + atMost - 1) / atMost);
     }
 
-    private static double Occupied(Preparation preparation) => preparation switch
+    private static double Occupied(Preparation preparation, double readout) => preparation switch
     {
-        Inversion p => DurationOf(p.Pulse),
+        Inversion p when p.InversionTime < readout + PulseDuration(p.Pulse) => PulseDuration(p.Pulse) / 2 + p.InversionTime,
+        Inversion p => PulseDuration(p.Pulse),
         T2Preparation p => p.PreparationTime + p.Delay,
-        SpectralSaturation p => DurationOf(p.Pulse) + p.Delay,
-        SpectralInversion p => DurationOf(p.Pulse) / 2 + p.InversionTime,
+        SpectralSaturation p => PulseDuration(p.Pulse) + p.Delay,
+        SpectralInversion p => PulseDuration(p.Pulse) / 2 + p.InversionTime,
         _ => throw new ArgumentException($"Preparation {preparation.GetType().Name} is not known here."),
     };
 
-    private static double ReadoutDuration(Series series)
+    /// <summary>From the excitation centre to the end of the last echo, its sampling and its gradients, ms.</summary>
+    /// <param name="series">The series.</param>
+    public static double ReadoutDuration(Series series)
     {
         var sampling = 1000 / series.Geometry.PixelBandwidth;
         return series.Readout switch
@@ -61,7 +66,9 @@ public readonly record struct SliceFit(double BusyTime, int SlicesPerConcatenati
         };
     }
 
-    private static double DurationOf(RfPulse pulse) => pulse switch
+    /// <summary>Length of a pulse, ms; <see cref="AssumedInversionDuration"/> where it is known by its efficiency or its name alone.</summary>
+    /// <param name="pulse">The pulse.</param>
+    public static double PulseDuration(RfPulse pulse) => pulse switch
     {
         HardPulse p => p.Duration,
         WindowedSincPulse p => p.Duration,

@@ -1,10 +1,14 @@
 using ProtoLedger.Physics.Acquisition;
+using ProtoLedger.Physics.Observables;
 
 namespace ProtoLedger.Protocols.Validation;
 
 /// <summary>Where the preparations of a series stand before its excitation.</summary>
 internal static class InversionTiming
 {
+    /// <summary>From the beginning of an excitation pulse to its centre, ms; common practice, no source.</summary>
+    public const double HalfExcitation = 1;
+
     /// <summary>From the centre of each preparation's (first) pulse to the excitation centre, ms, in the order in which they are played.</summary>
     public static IReadOnlyList<double> BeforeExcitation(Series series)
     {
@@ -18,7 +22,7 @@ internal static class InversionTiming
                 Inversion { End: InversionTimeEnd.KSpaceCentre } block => block.InversionTime - ToKSpaceCentre(series.Readout),
                 Inversion block => block.InversionTime,
                 T2Preparation block => following + block.Delay + block.PreparationTime,
-                SpectralSaturation block => following + block.Delay + SliceTiming.Duration(block.Pulse) / 2,
+                SpectralSaturation block => following + block.Delay + SliceFit.PulseDuration(block.Pulse) / 2,
                 SpectralInversion block => block.InversionTime,
                 _ => following,
             };

@@ -1,4 +1,5 @@
 using ProtoLedger.Physics.Acquisition;
+using ProtoLedger.Physics.Observables;
 using ProtoLedger.Protocols.Canonical;
 using ProtoLedger.Protocols.Formats.V1.Shapes;
 
@@ -40,7 +41,7 @@ internal static class PreparationValidation
     {
         var (following, what) = index + 1 < times.Count
             ? (times[index + 1] + Lead(series.Preparations[index + 1]), "the next preparation")
-            : (SliceTiming.ReadoutPulse / 2, "the excitation");
+            : (InversionTiming.HalfExcitation, "the excitation");
         var shortest = inversionTime - times[index] + following + half;
         if (times[index] < following + half)
             errors.Add(
@@ -48,13 +49,13 @@ internal static class PreparationValidation
                 $"The inversion time leaves no room for the pulses: {what} would begin before the inversion pulse has ended.");
     }
 
-    private static double Half(RfPulse pulse) => SliceTiming.Duration(pulse) / 2;
+    private static double Half(RfPulse pulse) => SliceFit.PulseDuration(pulse) / 2;
 
     private static double Lead(Preparation preparation) => preparation switch
     {
         Inversion block => Half(block.Pulse),
         SpectralInversion block => Half(block.Pulse),
         SpectralSaturation block => Half(block.Pulse),
-        _ => SliceTiming.ReadoutPulse / 2,
+        _ => InversionTiming.HalfExcitation,
     };
 }

@@ -1,4 +1,5 @@
 using ProtoLedger.Physics.Acquisition;
+using ProtoLedger.Physics.Observables;
 using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Protocols.Formats.V1.Shapes;
 
@@ -8,7 +9,7 @@ namespace ProtoLedger.Protocols.Validation;
 public static class SeriesValidation
 {
     /// <summary>All errors of a series; empty when it can be played.</summary>
-    /// <param name="series">The series; pulses that are still references count with <see cref="SliceTiming.DefaultPreparationPulse"/>.</param>
+    /// <param name="series">The series; pulses that are still references count with <see cref="SliceFit.AssumedInversionDuration"/>.</param>
     /// <param name="pointer">Where the series stands; begins the pointer of every error.</param>
     public static IReadOnlyList<DocumentError> Validate(Series series, string pointer)
     {
@@ -39,27 +40,28 @@ public static class SeriesValidation
     private static void CheckFit(Series series, string pointer, ErrorList errors)
     {
         var repetition = series.Readout.RepetitionTime;
-        var first = series.Preparations.Count == 0 ? 0 : InversionTiming.BeforeExcitation(series).Max();
-        var lead = series.Preparations.Count == 0 ? SliceTiming.ReadoutPulse / 2 : 0;
-        var needed = first + lead + SliceTiming.ReadoutLength(series.Readout);
-        if (needed > repetition)
+        var readout = SliceFit.ReadoutDuration(series);
+        var first = InversionTiming.BeforeExcitation(series).DefaultIfEmpty().Max();
+        if (first + readout > repetition)
         {
             errors.Add(
-                pointer + "/readout/RepetitionTime", repetition, $"≥ {ShownValue.Of(Math.Ceiling(needed))} ms",
-                $"Preparation ({ShownValue.Of(first)} ms before the excitation) and readout ({ShownValue.Of(SliceTiming.ReadoutLength(series.Readout))} ms) do not fit in the repetition time.");
+                pointer + "/readout/RepetitionTime", repetition, $"≥ {ShownValue.Of(Math.Ceiling(first + readout))} ms",
+                $"Preparation ({Shown(first)} ms before the excitation) and readout ({Shown(readout)} ms after it) do not fit in the repetition time.");
             return;
         }
 
-        if (SliceTiming.SlicesFit(series))
+        var fit = SliceFit.Of(series);
+        if (fit.Fits)
             return;
-        var (slices, passes, busy) = (series.Timing.Slices, series.Timing.Concatenations, SliceTiming.Busy(series));
-        if (SliceTiming.NeededConcatenations(series) is { } enough)
+        if (fit.ConcatenationsNeeded > 0)
             errors.Add(
-                pointer + "/timing/concatenations", passes, $"≥ {enough}",
-                $"{SliceTiming.SlicesPerPass(series, passes)} of {slices} slices in a pass, each busy for {ShownValue.Of(Math.Round(busy, 1))} ms, do not fit in the repetition time of {ShownValue.Of(repetition)} ms; {enough} concatenations are needed.");
+                pointer + "/timing/concatenations", series.Timing.Concatenations, $"≥ {fit.ConcatenationsNeeded}",
+                $"{fit.SlicesPerConcatenation} of {series.Timing.Slices} slices in a pass, each busy for {Shown(fit.BusyTime)} ms, do not fit in the repetition time of {ShownValue.Of(repetition)} ms; {fit.ConcatenationsNeeded} concatenations are needed.");
         else
             errors.Add(
-                pointer + "/readout/RepetitionTime", repetition, $"≥ {ShownValue.Of(Math.Ceiling(busy))} ms",
-                $"Even one slice, busy for {ShownValue.Of(Math.Round(busy, 1))} ms, does not fit in the repetition time.");
+                pointer + "/readout/RepetitionTime", repetition, $"≥ {ShownValue.Of(Math.Ceiling(fit.BusyTime))} ms",
+                $"Even one slice, busy for {Shown(fit.BusyTime)} ms, does not fit in the repetition time.");
     }
+
+    private static string Shown(double milliseconds) => ShownValue.Of(Math.Round(milliseconds, 1));
 }

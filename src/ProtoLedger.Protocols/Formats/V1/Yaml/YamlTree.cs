@@ -43,6 +43,11 @@ internal sealed class YamlTree
             return new YamlTreeResult.Refused(
                 [new DocumentError("", null, null, $"Not YAML: {fault.Message}", (int)fault.Start.Line, (int)fault.Start.Column)]);
         }
+        catch (Exception fault) when (fault is InvalidOperationException or ArgumentException or IndexOutOfRangeException)
+        {
+            // The scanner throws these, without a place, at a text that ends within a flow collection and the like.
+            return new YamlTreeResult.Refused([new DocumentError("", null, null, "Not YAML: the text ends or breaks off within a value.")]);
+        }
     }
 
     private JsonNode ReadStream()

@@ -112,7 +112,7 @@ internal sealed class YamlWriter
     private static bool IsInline(JsonNode value, Shape shape) => value switch
     {
         JsonObject { Count: 0 } => true,
-        JsonObject => shape is ObjectShape { Flow: true } or VariantShape or NameOrObjectShape,
+        JsonObject => shape is ObjectShape { Flow: true } or MapShape { Value: TextShape } or VariantShape or NameOrObjectShape,
         JsonArray { Count: 0 } => true,
         JsonArray => ((ListShape)shape).Item is NumberShape or TextShape or ChoiceShape,
         _ => true,

@@ -74,7 +74,7 @@ internal static class SampleReport
                 new BalanceItem(FindingDirection.Same, "noise (old = 1)", "Axial fluid-nulled T2", [], 1, 1, "", ""),
             ],
             [
-                new ParameterChange(
+                new ReportChange(
                     "Axial fluid-nulled T2", "/series/2/readout/RepetitionTime", "RepetitionTime", "of the whole cycle", "9000", "6000", "ms",
                     [new ConsoleWording("linden-3t", "TR", null), new ConsoleWording("birch-15t", "Repetition", "first pulse to first pulse")]),
             ],
@@ -129,8 +129,8 @@ internal static class SampleReport
                     "ventricles and sulci stay dark", "linden-3t", "Axial fluid-nulled T2", [new RepairChange("InversionTime", 2400, 2130, "ms")], 0.97,
                     [new RepairCost("contrastDifference", "lesion", "white matter", 0.21, 0.17, "", FindingDirection.Worse)]),
             ],
-            new RunSummary(84, 2, 5120, 611, 3, 2, 0, 0),
-            [new TouchedVersion("brain-tumour", "Brain, tumour", 5, "linden-3t", true, "residualRatio", 0.12, 0.14, "", 0)],
+            new ReportRun(84, 2, 5120, 611, 3, 2, 0, 0),
+            [new TouchedVersion("brain-tumour", "Brain, tumour", 5, "linden-3t", true, "residualRatio", "ventricles and sulci", "white matter", 0.12, 0.14, "", 0)],
             [
                 new Assumption("inversion pulse of linden-3t", "adiabatic, f = 0.96 ± 0.02", "default of the tool", false),
                 new Assumption("T2 of cerebrospinal fluid at 3 T", "2000 ± 400 ms", "catalogue, recalled", true),

@@ -15,7 +15,7 @@ internal static partial class Details
         {
             var changes = ReportWords.Join([.. repair.Changes.Select(c =>
                 $"{ReportWords.Code(c.Parameter)} {Numbers.Setting(c.From)} to {ObservableWords.WithUnit(Numbers.Setting(c.To), UserText.Literal(c.Unit))}")]);
-            page.Heading(3, $"{UserText.Literal(repair.ExpectationTitle)}: {UserText.Literal(repair.SeriesTitle)}, {words.Scanner(repair.ScannerId)}")
+            page.Heading(3, $"{UserText.Literal(ReportWords.Capital(repair.ExpectationTitle))}: {UserText.Literal(repair.SeriesTitle)}, {words.Scanner(repair.ScannerId)}")
                 .Paragraph($"Change {changes}. The expectation then holds for {Numbers.Share(repair.ProbabilityHolds)} of plausible tissue values.");
             if (repair.Costs.Count == 0)
                 page.Paragraph("No other number moves.");
@@ -57,7 +57,7 @@ internal static partial class Details
                     Numbers.Whole(t.Version),
                     words.Scanner(t.ScannerId),
                     t.Effective ? "yes" : "no",
-                    ReportWords.Label(t.Observable, null, null),
+                    ReportWords.Label(t.Observable, t.Subject, t.Reference),
                     old,
                     @new,
                     Numbers.Whole(t.NewlyFails),
@@ -74,7 +74,7 @@ internal static partial class Details
                 ["What", "Value", "Source", "Evidence"],
                 report.Assumptions.Select(a => (IReadOnlyList<string>)
                 [
-                    UserText.Literal(ReportWords.Capital(a.Name)), UserText.Literal(a.Value), UserText.Literal(a.Source), a.Weak ? "**? weak**" : "as stated",
+                    UserText.Literal(ReportWords.Capital(a.Name)), UserText.Literal(a.Value), UserText.Literal(a.Source), a.Weak ? Mark.Weak.ToString() : "as stated",
                 ]));
     }
 

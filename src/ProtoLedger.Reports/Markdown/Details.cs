@@ -114,7 +114,7 @@ internal static partial class Details
             report.Verdicts.Select(v => (IReadOnlyList<string>)
             [
                 Mark.Of(v.Transition).ToString(),
-                $"{UserText.Literal(v.Title)} ({ReportWords.Code(v.ExpectationId)})",
+                $"{UserText.Literal(ReportWords.Capital(v.Title))} ({ReportWords.Code(v.ExpectationId)})",
                 UserText.Literal(v.Why),
                 $"{UserText.Literal(v.SeriesTitle)}, {words.Scanner(v.ScannerId)}, {UserText.Literal(v.Condition)}",
                 $"{(v.AtMost ? "at most" : "at least")} {ObservableWords.WithUnit(Numbers.Setting(v.Limit), v.Unit)}{(v.Paired ? ", new over old" : "")}",

@@ -149,7 +149,7 @@ internal static partial class FirstScreen
             ]));
     }
 
-    private static string Console(ParameterChange change, ReportWords words) =>
+    private static string Console(ReportChange change, ReportWords words) =>
         change.Console.Count == 0
             ? "no wording recorded"
             : string.Join("; ", change.Console

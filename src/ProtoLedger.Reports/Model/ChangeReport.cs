@@ -24,7 +24,7 @@ public sealed record ChangeReport(
     ReportIdentity Identity,
     IReadOnlyList<ReportFinding> Findings,
     IReadOnlyList<BalanceItem> Balance,
-    IReadOnlyList<ParameterChange> Changes,
+    IReadOnlyList<ReportChange> Changes,
     IReadOnlyList<ScannerSummary> Scanners,
     IReadOnlyList<UnchangedVariant> UnchangedVariants,
     IReadOnlyList<OmissionNote> LeftOut,
@@ -36,7 +36,7 @@ public sealed record ChangeReport(
     IReadOnlyList<RecoveryCurve> RecoveryCurves,
     IReadOnlyList<FieldMap> FieldMaps,
     IReadOnlyList<ReportRepair> Repairs,
-    RunSummary Run,
+    ReportRun Run,
     IReadOnlyList<TouchedVersion> Touched,
     IReadOnlyList<Assumption> Assumptions,
     IReadOnlyList<string> Cautions);

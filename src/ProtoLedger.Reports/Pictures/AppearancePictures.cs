@@ -147,7 +147,7 @@ public static class AppearancePictures
             .Where(t => phantom.Tissues.Contains(t.Tissue))
             .Select(t => (t.Words, Before: Shade(t.Before / scale / white), After: Shade(t.After / scale / white)))
             .ToList();
-        var changed = tissues.Where(t => t.Before != t.After).Select(t => $"{t.Words} turns from {t.Before} to {t.After}").ToList();
+        var changed = tissues.Where(t => t.Before != t.After).Select(t => $"{t.Words} from {t.Before} to {t.After}").ToList();
         var kept = tissues.Where(t => t.Before == t.After).Select(t => $"{t.Words} ({t.Before})").ToList();
         var off = appearance.Tissues.Any(t => Differs(t.Before, t.BeforeOffResonance, scale) || Differs(t.After, t.AfterOffResonance, scale))
             ? " One region is drawn off resonance, at the worst of the condition."

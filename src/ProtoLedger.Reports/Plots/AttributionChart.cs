@@ -87,7 +87,7 @@ public static class AttributionChart
 
     private static string Describe(AttributionTable table, string label) =>
         $"The signed value of {label} goes from {Numbers.Plain(table.Before, 1)} to {Numbers.Plain(table.After, 1)}. "
-        + string.Join(" ", table.Contributions.Select(c => $"{c.Parameter} ({c.Change}) contributes {Amount(c)}."));
+        + $"Largest part: {table.Contributions[0].Parameter} ({table.Contributions[0].Change}), {Amount(table.Contributions[0])}.";
 
     private static FigureTable Twin(AttributionTable table)
     {

@@ -22,7 +22,7 @@ public static class FieldMapChart
         Check(map.Before, map, allowEmpty: true);
         Check(map.After, map, allowEmpty: false);
         var label = ObservableWords.Label(map.Observable, map.Subject, map.Reference);
-        var title = $"{label} over the field: {map.SeriesTitle}, {scannerTitle}";
+        var title = $"{char.ToUpperInvariant(label[0])}{label[1..]} over the field: {map.SeriesTitle}, {scannerTitle}";
         var panel = CellHeight * map.B1Scale.Count;
         var before = map.Before.Count > 0;
         var height = 30 + (before ? panel + 36 : 0) + panel + 84;
@@ -110,7 +110,7 @@ public static class FieldMapChart
 
     private static string Describe(FieldMap map, string label)
     {
-        var text = map.Before.Count > 0 ? $"{label} before {Range(map.Before)}, after {Range(map.After)}." : $"{label} {Range(map.After)}.";
+        var text = map.Before.Count > 0 ? $"Before {Range(map.Before)}, after {Range(map.After)}." : $"After {Range(map.After)}.";
         if (map.Limit is null)
             return text;
         var cells = map.B1Scale.Count * map.OffResonanceHz.Count;

@@ -108,15 +108,17 @@ public static class RecoveryChart
             var (x, y) = (Left + (i % 2 * 320), Bottom + 58 + (i / 2 * 20));
             canvas.Line(x, y - 4, x + 34, y - 4, Stroke.Series(i));
             canvas.Marker(i + 1, x + 17, y - 4, 4, Stroke.Series(i) with { Width = 1.5 }, true);
-            canvas.Label(x + 42, y, $"{curve.Tissues[i].Tissue} (dashed, hollow: old)");
+            canvas.Label(x + 42, y, $"{curve.Tissues[i].Tissue} {(i == 0 ? " (dashed and hollow: old)" : "")}");
         }
     }
 
     private static string Describe(RecoveryCurve curve)
     {
-        var times = $"Inversion time {Setting(curve.InversionTimeBefore)} before, {Setting(curve.InversionTimeAfter)} after.";
-        return times + string.Concat(curve.Tissues.Select(t =>
-            $" {t.Tissue}: null at {Null(t.NullBefore)} before, {Null(t.NullAfter)} after; longitudinal magnetisation at the inversion time {At(t.Before, curve.InversionTimeBefore)} before, {At(t.After, curve.InversionTimeAfter)} after."));
+        var same = curve.InversionTimeBefore.Equals(curve.InversionTimeAfter);
+        var times = same
+            ? $"Inversion time {Setting(curve.InversionTimeAfter)} before and after."
+            : $"Inversion time {Setting(curve.InversionTimeBefore)} before, {Setting(curve.InversionTimeAfter)} after.";
+        return $"{times} Null of {string.Join("; of ", curve.Tissues.Select(t => $"{t.Tissue}: {Null(t.NullBefore)} before, {Null(t.NullAfter)} after"))}.";
     }
 
     private static FigureTable Twin(RecoveryCurve curve) => new(

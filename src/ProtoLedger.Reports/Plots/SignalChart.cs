@@ -42,10 +42,13 @@ public static class SignalChart
         canvas.Label(Left + 20, bottom + 58, "before");
         canvas.Marker(1, Left + 108, bottom + 54, 5, Stroke.Series(0), true);
         canvas.Label(Left + 120, bottom + 58, "after");
-        var text = string.Join(" ", tissues.Select(t => $"{ReportCapital(t.Words)} {Numbers.Plain(t.Before)} before, {Numbers.Plain(t.After)} after."));
+        var most = tissues.MaxBy(t => Math.Abs(t.After - t.Before));
+        var text = Math.Abs(most.After - most.Before) < 0.005
+            ? "No tissue changes its brightness."
+            : $"Largest change: {most.Words}, {Numbers.Hundredths(most.Before)} to {Numbers.Hundredths(most.After)}, where the brightest tissue before is 1.";
         var twin = new FigureTable(
             ["Tissue", " Before", " After"],
-            [.. tissues.Select(t => (IReadOnlyList<string>)[t.Words, Numbers.Plain(t.Before), Numbers.Plain(t.After)])]);
+            [.. tissues.Select(t => (IReadOnlyList<string>)[t.Words, Numbers.Hundredths(t.Before), Numbers.Hundredths(t.After)])]);
         return new Figure(name, title, text, canvas.Finish(title, text), twin);
     }
 
@@ -65,6 +68,4 @@ public static class SignalChart
         canvas.Marker(0, axis.At(tissue.Before), y, 6, Stroke.Series(3), false);
         canvas.Marker(1, axis.At(tissue.After), y, 4.5, Stroke.Series(0), true);
     }
-
-    private static string ReportCapital(string words) => words.Length > 0 ? char.ToUpperInvariant(words[0]) + words[1..] : words;
 }

@@ -25,11 +25,14 @@ internal sealed record Mark(string Shape, string Word, string Tone)
     private static readonly Mark UncertainNow = new("?", "uncertain", "open");
     private static readonly Mark NotPredictable = new("–", "not predictable", "plain");
 
+    /// <summary>A value of weak evidence.</summary>
+    public static Mark Weak { get; } = new("?", "weak", "open");
+
     /// <summary>Every mark that a report can show.</summary>
     public static IReadOnlyList<Mark> All { get; } =
     [
         Worse, Better, Same, Different, NewlyFails, StillFails, NewlyUncertain, StillUncertain, NewlyHolds, StillHolds,
-        NotComparable, HoldsNow, FailsNow, UncertainNow, NotPredictable,
+        NotComparable, HoldsNow, FailsNow, UncertainNow, NotPredictable, Weak,
     ];
 
     /// <summary>Mark of a direction.</summary>

@@ -66,6 +66,9 @@ internal static class Numbers
         _ => probability.ToString("F2", CultureInfo.InvariantCulture),
     };
 
+    /// <summary>Two decimals, for columns that are compared line by line.</summary>
+    public static string Hundredths(double value) => Signed(value.ToString("F2", CultureInfo.InvariantCulture));
+
     /// <summary>Whole number.</summary>
     public static string Whole(long value) => value.ToString(CultureInfo.InvariantCulture);
 

@@ -9,7 +9,7 @@ namespace ProtoLedger.Reports.Model;
 /// <param name="New">Value after as text, null where it was removed.</param>
 /// <param name="Unit">Unit of both, empty for text and numbers without one.</param>
 /// <param name="Console">Wording at each scanner's console.</param>
-public sealed record ParameterChange(
+public sealed record ReportChange(
     string? SeriesTitle,
     string Pointer,
     string Parameter,

@@ -9,7 +9,7 @@ namespace ProtoLedger.Reports.Model;
 /// <param name="NewlyFailing">Expectations that newly fail.</param>
 /// <param name="NewlyHolding">Expectations that newly hold.</param>
 /// <param name="FailedShards">Parts of the run that could not be computed; 0 in a complete run.</param>
-public sealed record RunSummary(
+public sealed record ReportRun(
     int Versions, int Proposals, int Results, int Shared, int Moved, int NewlyFailing, int NewlyHolding, int FailedShards);
 
 /// <summary>Another stored version whose prediction moved.</summary>
@@ -19,6 +19,8 @@ public sealed record RunSummary(
 /// <param name="ScannerId">Scanner.</param>
 /// <param name="Effective">True where it is effective there now.</param>
 /// <param name="Observable">Observable that moved most.</param>
+/// <param name="Subject">Tissue in plain words, or null.</param>
+/// <param name="Reference">Second tissue, or null.</param>
 /// <param name="Before">Its value in the run before.</param>
 /// <param name="After">Its value now.</param>
 /// <param name="Unit">Unit, empty for ratios.</param>
@@ -30,6 +32,8 @@ public sealed record TouchedVersion(
     string ScannerId,
     bool Effective,
     string Observable,
+    string? Subject,
+    string? Reference,
     double Before,
     double After,
     string Unit,

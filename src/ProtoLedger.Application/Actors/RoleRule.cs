@@ -20,9 +20,9 @@ public sealed record RoleRule(string Name, IReadOnlyList<string> AllowedRoles, b
     public static RoleRule Propose { get; } = new(
         "propose", [Roles.Technologist, Roles.LeadTechnologist, Roles.Physicist, Roles.Radiologist], false, Actors.Scope.Propose);
 
-    /// <summary>Those who may sign; which signature a request needs is a rule of the document.</summary>
+    /// <summary>Anybody with a session and a signing key; which role or deputy may sign is a rule of the document.</summary>
     public static RoleRule Sign { get; } = new(
-        "sign", [Roles.LeadTechnologist, Roles.Physicist, Roles.Radiologist], false, null);
+        "sign", [], false, null);
 
     /// <summary>Those who may decline a request.</summary>
     public static RoleRule Decline { get; } = new("decline", [Roles.Physicist, Roles.Radiologist], false, null);

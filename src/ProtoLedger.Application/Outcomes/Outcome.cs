@@ -29,3 +29,12 @@ public sealed class Outcome<T>
     [SuppressMessage("Usage", "CA2225", Justification = "A use case ends in `return value;` or `return refusal;`.")]
     public static implicit operator Outcome<T>(Refusal refusal) => new(default, refusal);
 }
+
+/// <summary>Makes outcomes of types from which no conversion can be declared, such as lists.</summary>
+public static class Outcome
+{
+    /// <summary>A value.</summary>
+    /// <typeparam name="T">Its type.</typeparam>
+    /// <param name="value">The value.</param>
+    public static Outcome<T> Done<T>(T value) => value;
+}

@@ -4,6 +4,7 @@ using ProtoLedger.Application.ChangeRequests;
 using ProtoLedger.Application.Commanding;
 using ProtoLedger.Application.Documents;
 using ProtoLedger.Application.History;
+using ProtoLedger.Application.Runs;
 using ProtoLedger.Application.Site;
 
 namespace ProtoLedger.Application;
@@ -29,7 +30,7 @@ public static class ApplicationServices
         typeof(Commands), typeof(SiteKeys), typeof(LedgerWriter), typeof(DocumentShelf), typeof(Passwords), typeof(SecondFactor), typeof(SigningKeys),
         typeof(CreateChangeRequest), typeof(EditChangeRequest), typeof(SubmitChangeRequest), typeof(WithdrawChangeRequest),
         typeof(DeclineChangeRequest), typeof(ApproveChangeRequest), typeof(RebaseChangeRequest), typeof(MakeEffective),
-        typeof(ReadChangeRequests), typeof(AddComment),
+        typeof(ReadChangeRequests), typeof(AddComment), typeof(ReadDocuments), typeof(ReadRuns), typeof(EnqueueRun), typeof(ReadLedger), typeof(ReadAudit), typeof(PrepareSite),
         typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
     ];
 }

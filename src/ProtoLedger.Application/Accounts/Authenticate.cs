@@ -42,8 +42,8 @@ public sealed class Authenticate(ITransactions transactions, AccountOptions opti
         return new Actor(account.Name, account.DisplayName, account.Roles, session ? Credential.Session : Credential.Token, token.Scopes);
     }
 
-    private Task TouchAsync(byte[] hash, DateTime now, CancellationToken cancellationToken) =>
-        transactions.WriteAsync<bool>(
+    private async Task TouchAsync(byte[] hash, DateTime now, CancellationToken cancellationToken) =>
+        await transactions.WriteAsync<bool>(
             async stores =>
             {
                 await stores.Accounts.TouchTokenAsync(hash, now, cancellationToken);

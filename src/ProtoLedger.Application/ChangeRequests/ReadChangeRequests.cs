@@ -93,7 +93,7 @@ public sealed class ReadChangeRequests(Commands commands, DocumentShelf shelf)
             async (stores, row) =>
             {
                 var signatures = await stores.ChangeRequests.SignaturesAsync(id, cancellationToken);
-                var wanted = number is null ? signatures.LastOrDefault() : signatures.FirstOrDefault(signature => signature.Number == number);
+                var wanted = signatures.SingleOrDefault(signature => signature.Number == (number ?? signatures.Count));
                 return wanted is null
                     ? new NotFound(number is null ? $"Change request {id} is not signed." : $"Change request {id} has no signature {number}.")
                     : new SignatureFiles(ChangeRequestViews.View(wanted, row), wanted.Manifest, wanted.Cms);

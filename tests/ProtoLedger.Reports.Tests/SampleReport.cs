@@ -12,6 +12,11 @@ internal static class SampleReport
 {
     public static ChangeReport Cut { get; } = Make();
 
+    /// <summary>The same change with nothing predicted.</summary>
+    public static ChangeReport Empty { get; } = new(
+        Cut.Identity with { BaseVersion = null, Hashes = [], Reason = "" },
+        [], [], [], [], [], [], [], [], [], [], [], [], [], [], new ReportRun(0, 0, 0, 0, 0, 0, 0, 0), [], [], []);
+
     public static double Longitudinal(double t, double tr, double t1, double f = 0.96) =>
         1 - ((1 + f) * Math.Exp(-t / t1)) + (f * Math.Exp(-tr / t1));
 

@@ -7,13 +7,14 @@ namespace ProtoLedger.Reports.Markdown;
 /// <summary>What stands behind the first screen.</summary>
 internal static partial class Details
 {
-    /// <summary>Heading of the table of predicted numbers.</summary>
-    public const string EffectsHeading = "Predicted effect by tissue and pair";
+    /// <summary>Heading of the list of all findings.</summary>
+    public const string FindingsHeading = "Every finding, scanner by scanner";
 
     public static void Write(MarkdownWriter page, ChangeReport report, ReportFigures figures, ReportWords words)
     {
+        Findings(page, report);
         Appearances(page, report, figures, words);
-        Effects(page.Heading(2, EffectsHeading), report, words);
+        Effects(page.Heading(2, "Predicted effect by tissue and pair"), report, words);
         Attributions(page.Heading(2, "Which parameter did it"), report, figures, words);
         Verdicts(page.Heading(2, "Written expectations"), report, words);
         Plots(page, "Recovery around the inversion time", figures.RecoveryCurves);
@@ -23,6 +24,21 @@ internal static partial class Details
         Assumptions(page.Heading(2, "Assumptions"), report);
         page.Heading(2, "Cautions").List(Cautions.Of(report, words));
         Origin(page.Heading(2, "Origin and hashes"), report);
+    }
+
+    private static void Findings(MarkdownWriter page, ChangeReport report)
+    {
+        if (report.Findings.Count == 0)
+            return;
+        page.Heading(2, FindingsHeading);
+        foreach (var scanner in FirstScreen.WorstFirst(report))
+        {
+            var findings = report.Findings.Where(f => f.ScannerId == scanner.ScannerId).ToList();
+            if (findings.Count > 0)
+                page.Heading(3, UserText.Literal(scanner.Title)).List(findings
+                    .OrderBy(FirstScreen.Rank).ThenByDescending(f => f.Severity).ThenBy(f => f.Sentence, StringComparer.Ordinal)
+                    .Select(f => $"{UserText.Literal(f.SeriesTitle)}: {UserText.Literal(ReportWords.Sentence(f.Sentence))} {FirstScreen.MarkOf(f)}"));
+        }
     }
 
     private static void Appearances(MarkdownWriter page, ChangeReport report, ReportFigures figures, ReportWords words)

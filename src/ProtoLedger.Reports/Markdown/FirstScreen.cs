@@ -50,14 +50,13 @@ internal static partial class FirstScreen
 
         page.List(groups.Take(SentencesShown).Select(g => Finding(g, words)));
         if (groups.Count > SentencesShown)
-            page.Paragraph($"{ReportWords.Count(groups.Count - SentencesShown, "smaller finding is", "smaller findings are")} under \u201C{Details.EffectsHeading}\u201D.");
+            page.Paragraph($"{ReportWords.Count(groups.Count - SentencesShown, "smaller finding is", "smaller findings are")} under \u201C{Details.FindingsHeading}\u201D.");
     }
 
     private static string Finding(List<ReportFinding> group, ReportWords words)
     {
         var worst = group[0];
-        var mark = worst.Transition is { } t and not Transition.StillHolds and not Transition.NotComparable ? Mark.Of(t) : Mark.Of(worst.Direction);
-        var text = $"{mark} {UserText.Literal(ReportWords.Sentence(worst.Sentence))} {Where(group, words)}";
+        var text = $"{MarkOf(worst)} {UserText.Literal(ReportWords.Sentence(worst.Sentence))} {Where(group, words)}";
         if (worst.ExpectationTitle is { } title && worst.ProbabilityHolds is { } p)
             text += $" Written expectation \u201C{UserText.Literal(title)}\u201D: holds for {Numbers.Share(p)} of plausible tissue values.";
         if (worst.ReferenceMoved && worst.Reference is { } reference)
@@ -84,7 +83,12 @@ internal static partial class FirstScreen
         return $"{words.Scanner(finding.ScannerId)}, {old} to {@new}";
     }
 
-    private static int Rank(ReportFinding finding) => finding.Transition switch
+    /// <summary>What became of the expectation where one speaks of it, the direction otherwise.</summary>
+    internal static Mark MarkOf(ReportFinding finding) =>
+        finding.Transition is { } t and not Transition.StillHolds and not Transition.NotComparable ? Mark.Of(t) : Mark.Of(finding.Direction);
+
+    /// <summary>Smaller is told earlier.</summary>
+    internal static int Rank(ReportFinding finding) => finding.Transition switch
     {
         Transition.NewlyFails => 0,
         Transition.NewlyUncertain => 1,

@@ -100,7 +100,7 @@ public static class AttributionChart
                 c.Parameter,
                 c.Change,
                 Amount(c),
-                Math.Abs(change) > 1e-12 ? $"{Math.Round(100 * c.Amount / change):0} %".Replace('-', '\u2212') : "–",
+                Math.Abs(change) > 1e-12 ? $"{Numbers.Setting(Math.Round(100 * c.Amount / change))} %" : "–",
             ])]);
     }
 }

@@ -44,7 +44,7 @@ public static class DocumentReader
     /// <param name="expected">Kind that the document must have, or null for any.</param>
     public static ParseResult ReadYaml(string yaml, DocumentKind? expected = null)
     {
-        switch (YamlTree.Parse(yaml))
+        switch (YamlTree.Parse(yaml, ShapeOf))
         {
             case YamlTreeResult.Refused(var errors):
                 return new ParseResult.Refused(errors);
@@ -85,6 +85,9 @@ public static class DocumentReader
             return Refuse(refused);
         }
     }
+
+    private static ObjectShape? ShapeOf(JsonNode tree) =>
+        tree is JsonObject members && DocumentKinds.TryParse(ShapeCheck.KindOf(members["kind"]), out var kind) ? DocumentShapes.Of(kind) : null;
 
     private static DocumentError? KindOf(JsonObject members, DocumentKind? expected, out DocumentKind kind)
     {

@@ -8,7 +8,7 @@ internal static class DocumentShapes
 {
     public const int Format = 1;
 
-    private static readonly string[] Roles =
+    public static readonly string[] Roles =
         ["technologist", "lead-technologist", "physicist", "radiologist", "reviewer", "administrator"];
 
     private static readonly string[] Meanings =

@@ -2,6 +2,7 @@ using System.Text;
 using System.Text.Json.Nodes;
 using ProtoLedger.Protocols.Canonical;
 using ProtoLedger.Protocols.Documents;
+using ProtoLedger.Protocols.Formats.V1.Shapes;
 using YamlDotNet.Core;
 using YamlDotNet.Core.Events;
 
@@ -18,7 +19,9 @@ internal sealed class YamlTree
 
     private YamlTree(string yaml, YamlPlaces places) => (parser, this.places) = (new Parser(new StringReader(yaml)), places);
 
-    public static YamlTreeResult Parse(string yaml)
+    /// <param name="yaml">The text.</param>
+    /// <param name="shapeOf">Shape of the whole, once its tree of texts is known; null where there is none.</param>
+    public static YamlTreeResult Parse(string yaml, Func<JsonNode, Shape?> shapeOf)
     {
         var places = new YamlPlaces();
         try
@@ -28,7 +31,7 @@ internal sealed class YamlTree
                 throw new CanonicalJsonException("", $"The text has {bytes} bytes; the limit is {CanonicalJson.MaximumBytes} (1 MiB).");
             StrictJson.RequireText(yaml, "");
             var tree = new YamlTree(yaml, places).ReadStream();
-            return new YamlTreeResult.Parsed(YamlTyping.Apply(tree, places), places);
+            return new YamlTreeResult.Parsed(YamlTyping.Apply(tree, shapeOf(tree), places), places);
         }
         catch (YamlRefusedException fault)
         {

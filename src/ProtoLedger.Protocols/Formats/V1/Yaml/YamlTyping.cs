@@ -2,7 +2,6 @@ using System.Globalization;
 using System.Text.Json.Nodes;
 using System.Text.RegularExpressions;
 using ProtoLedger.Protocols.Canonical;
-using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Protocols.Formats.V1.Shapes;
 
 namespace ProtoLedger.Protocols.Formats.V1.Yaml;
@@ -14,10 +13,8 @@ internal sealed partial class YamlTyping
 
     private YamlTyping(YamlPlaces places) => this.places = places;
 
-    public static JsonNode Apply(JsonNode tree, YamlPlaces places) =>
-        tree is JsonObject members && DocumentKinds.TryParse(ShapeCheck.KindOf(members["kind"]), out var kind)
-            ? new YamlTyping(places).Convert(tree, DocumentShapes.Of(kind), "")!
-            : tree;
+    public static JsonNode Apply(JsonNode tree, Shape? shape, YamlPlaces places) =>
+        shape is null ? tree : new YamlTyping(places).Convert(tree, shape, "")!;
 
     private JsonNode? Convert(JsonNode? node, Shape? shape, string pointer) => (node, shape) switch
     {

@@ -51,12 +51,7 @@ internal sealed class SignatureFile
         Demand(content.ReadObjectIdentifier() == Oids.SignedData, "it is not signed data");
         var signedData = content.ReadSequence(Zero).ReadSequence();
         signedData.ReadInteger();
-        var digests = signedData.ReadSetOf();
-        if (Foreign(digests, Oids.Sha256, "the file's digest") is { } weakDigest)
-        {
-            return (null, weakDigest);
-        }
-
+        signedData.ReadSetOf();
         signedData.ReadSequence();
         Demand(signedData.PeekTag().HasSameClassAndValue(Zero), "it has no certificate");
         var certificates = signedData.ReadSequence(Zero);

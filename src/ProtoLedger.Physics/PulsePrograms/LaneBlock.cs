@@ -1,0 +1,236 @@
+using System.Runtime.CompilerServices;
+using ProtoLedger.Physics.Acquisition;
+using ProtoLedger.Physics.Kernels;
+
+namespace ProtoLedger.Physics.PulsePrograms;
+
+/// <summary>Runs a program for one block of lanes: coefficients, trains, affine steady state.</summary>
+/// <remarks>
+/// A period maps the mean longitudinal magnetisation z to a · z + b. In the steady state z = b / (1 − a), since nothing else crosses a repetition
+/// time. Signals are linear in the magnetisation before their excitation: what recovers within a train never reaches an echo, by parity of the orders.
+/// States: see <see cref="TrainPlan"/>; the rotation of an order (p, m, z) about the refocusing axis is d = p − m, u = sin²(α/2) d + sin(α) z,
+/// p − u, m + u, ½ sin(α) d + cos(α) z, from the matrices of Weigel, J Magn Reson Imaging 2015;41:266, in these two channels.
+/// </remarks>
+internal static unsafe partial class LaneBlock<T>
+    where T : unmanaged, ILanes<T>
+{
+    /// <summary>Above this, the ratio of the relaxation factors that is scaled out would leave the range of a double: such lanes are carried forward instead.</summary>
+    private const double LargestScaling = 250;
+
+    internal static void Run(ProgramPlan plan, ReadOnlySpan<double> times, ReadOnlySpan<double> angles, in EngineArguments arguments, int lane)
+    {
+        var memory = (T*)Workspace.Rent(sizeof(T) * Coefficients.Size(plan));
+        var c = new Coefficients(plan, memory);
+        var rate1 = T.All(1) / T.Load(arguments.T1 + lane);
+        var rate2 = T.All(1) / T.Load(arguments.T2 + lane);
+        c.Compute(plan, times, angles, rate1, rate2, T.Load(arguments.B1 + lane), plan.Uses.Length > 0 && NeedsForward(plan, arguments));
+
+        var a = T.All(1);
+        var b = T.All(0);
+        var one = T.All(1);
+        T beforeA = one, beforeB = b, endA = one, endB = b, effective = b;
+        foreach (var block in plan.Blocks)
+        {
+            switch (block.Kind)
+            {
+                case BlockKind.Relax:
+                    var e = c.E1[block.Index];
+                    a *= e;
+                    b = T.MultiplyAdd(b, e, one - e);
+                    break;
+                case BlockKind.Multiply:
+                    var m = T.Load(arguments.Multipliers + (long)block.Index * arguments.MultiplierStride + lane);
+                    a *= m;
+                    b *= m;
+                    break;
+                case BlockKind.Flip:
+                    a *= c.Cosine[block.Index];
+                    b *= c.Cosine[block.Index];
+                    break;
+                case BlockKind.Train:
+                    var train = plan.Trains[block.Index];
+                    c.BeforeA[block.Index] = a;
+                    c.BeforeB[block.Index] = b;
+                    Through(train, c, times, rate1, rate2, arguments.Samples != null, out var slope, out var offset, out var signal);
+                    if (train.EffectiveIndex >= 0)
+                        (beforeA, beforeB, effective) = (a, b, signal);
+                    a *= slope;
+                    b = T.MultiplyAdd(b, slope, offset);
+                    if (train.EffectiveIndex >= 0)
+                        (endA, endB) = (a, b);
+                    break;
+            }
+        }
+
+        var z = Start(arguments, a, b);
+        var before = T.MultiplyAdd(beforeA, z, beforeB);
+        T.Store(effective * before, arguments.Signed + lane);
+        T.Store(before, arguments.Before + lane);
+        T.Store(T.MultiplyAdd(endA, z, endB), arguments.End + lane);
+        T.Store(z, arguments.Period + lane);
+        if (arguments.Samples == null)
+            return;
+        for (var t = 0; t < plan.Trains.Length; t++)
+        {
+            var train = plan.Trains[t];
+            before = T.MultiplyAdd(c.BeforeA[t], z, c.BeforeB[t]);
+            for (var s = train.FirstSample; s < train.FirstSample + train.SampleCount; s++)
+                T.Store(c.Samples[s] * before, arguments.Samples + (long)s * arguments.SampleStride + lane);
+        }
+    }
+
+    private static bool NeedsForward(ProgramPlan plan, in EngineArguments arguments) =>
+        arguments.Samples != null || (plan.Trains.Length > 0 && plan.Trains[0].End is null);
+
+    private static T Start(in EngineArguments arguments, T a, T b)
+    {
+        if (arguments.Start == StartState.Steady)
+            return b / (T.All(1) - a);
+        var z = T.All(1);
+        for (var i = 0; arguments.Start == StartState.AfterDummies && i < arguments.Dummies; i++)
+            z = T.MultiplyAdd(a, z, b);
+        return z;
+    }
+
+    /// <summary>Map of the longitudinal magnetisation through a train, and the signal over the magnetisation before it.</summary>
+    private static void Through(
+        TrainPlan train, in Coefficients c, ReadOnlySpan<double> times, T rate1, T rate2, bool samples, out T slope, out T offset, out T signal)
+    {
+        var scaling = T.All(times[train.Duration]) * (rate2 - rate1);
+        var limit = T.All(LargestScaling);
+        if (train.End is not null && !samples && !T.AnyLess(limit, scaling))
+        {
+            ThroughBackward(train, c, out slope, out offset, out signal);
+            return;
+        }
+
+        if (train.End is null || samples)
+        {
+            // All samples are wanted anyway, or the plan has no backward runs.
+            ThroughForward(train, c, out slope, out offset, out signal);
+            if (train.End is null || T.AnyLess(limit, scaling))
+                return;
+            ThroughBackward(train, c, out slope, out offset, out signal);
+            return;
+        }
+
+        c.ComputeForward(times, rate1, rate2);
+        ThroughForward(train, c, out var forwardSlope, out var forwardOffset, out var forwardSignal);
+        ThroughBackward(train, c, out slope, out offset, out signal);
+        slope = T.SelectLess(limit, scaling, forwardSlope, slope);
+        offset = T.SelectLess(limit, scaling, forwardOffset, offset);
+        signal = T.SelectLess(limit, scaling, forwardSignal, signal);
+    }
+
+    private static void ThroughBackward(TrainPlan train, in Coefficients c, out T slope, out T offset, out T signal)
+    {
+        var sine = c.Sine[train.ExcitationAngle];
+        var cosine = c.Cosine[train.ExcitationAngle];
+        var flipBack = train.FlipBackAngle;
+        var end = PullBackLongitudinal(train, c, out offset);
+        if (flipBack >= 0)
+        {
+            end *= c.Cosine[flipBack];
+            offset *= c.Cosine[flipBack];
+        }
+
+        slope = end * cosine;
+        if (train.FlipBack is not null)
+        {
+            var returned = PullBackSignal(train.FlipBack, c) * c.E2[train.Duration];
+            slope = T.MultiplyAdd(-c.Sine[flipBack] * returned, sine, slope);
+        }
+
+        signal = train.EffectiveSample is null
+            ? T.All(0)
+            : PullBackSignal(train.EffectiveSample, c) * c.E2[train.EffectiveSampleTime] * sine;
+    }
+
+    private static T PullBackSignal(BackwardRun run, in Coefficients c)
+    {
+        c.P[run.StartSlot] = T.All(1);
+        var spans = run.Pulses;
+        for (var i = 0; i < spans.Length; i++)
+        {
+            ref readonly var span = ref spans[i];
+            Prepare(span, c);
+            if (span.FoldP >= 0)
+                c.M[span.FoldM] += c.P[span.FoldP];
+            RotateBackward(span, c);
+        }
+
+        return run.ResultRephasingSlot < 0 ? c.P[run.ResultSlot] : c.P[run.ResultSlot] + c.M[run.ResultRephasingSlot];
+    }
+
+    private static T PullBackLongitudinal(TrainPlan train, in Coefficients c, out T offset)
+    {
+        var one = T.All(1);
+        if (train.LastInterval < 0)
+        {
+            offset = one - c.E1[train.FirstInterval];
+            return c.E1[train.FirstInterval];
+        }
+
+        var e = c.E1[train.LastInterval];
+        offset = one - e;
+        c.Z[0] = e;
+        var power = one;
+        var spans = train.End!.Pulses;
+        for (var i = 0; i < spans.Length; i++)
+        {
+            ref readonly var span = ref spans[i];
+            Prepare(span, c);
+            if (span.FoldP >= 0)
+                c.M[span.FoldM] -= c.P[span.FoldP];
+            RotateBackward(span, c);
+            if (span.RecoverZ < 0)
+                continue;
+            offset = T.MultiplyAdd(c.Z[0] * power, one - c.E1[span.RecoverTime], offset);
+            if (i < spans.Length - 1)
+                power *= c.E2[span.RecoverTime];
+        }
+
+        return c.Z[0] * power * c.E1[train.FirstInterval];
+    }
+
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static void Prepare(in PulseSpan span, in Coefficients c)
+    {
+        if (span.ZeroP >= 0)
+            c.P[span.ZeroP] = T.All(0);
+        if (span.ZeroM >= 0)
+            c.M[span.ZeroM] = T.All(0);
+        if (span.ZeroZ >= 0)
+            c.Z[span.ZeroZ] = T.All(0);
+    }
+
+    /// <summary>Transpose of rotation and following interval, T2 scaled out: the form on the states before from the form on the states after.</summary>
+    private static void RotateBackward(in PulseSpan span, in Coefficients c)
+    {
+        var count = span.Count;
+        if (count == 0)
+            return;
+        var s2 = c.SquaredHalfSine[span.Angle];
+        var minusSine = c.MinusSine[span.Angle];
+        var minusHalf = c.MinusHalfSineRatio[span.Pair];
+        var cosine = c.CosineRatio[span.Pair];
+        var p = c.P + span.P;
+        var m = c.M + span.M;
+        var z = c.Z + span.Z;
+        var stride = span.Stride;
+        for (var k = 0; k < count; k++)
+        {
+            var a = *p;
+            var b = *m;
+            var s = *z;
+            var d = a - b;
+            var u = T.MultiplyAdd(minusHalf, s, s2 * d);
+            *p = a - u;
+            *m = b + u;
+            *z = T.MultiplyAdd(minusSine, d, cosine * s);
+            p += stride;
+            m += stride;
+            z += stride;
+        }
+    }
+}

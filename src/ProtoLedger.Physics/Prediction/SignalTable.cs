@@ -8,7 +8,10 @@ namespace ProtoLedger.Physics.Prediction;
 /// </remarks>
 public sealed class SignalTable
 {
-    internal SignalTable(int count, int echoCount, IReadOnlyList<double> echoTimes, IReadOnlyList<Assumption> assumptions)
+    private readonly Func<IReadOnlyList<Assumption>> _assume;
+    private IReadOnlyList<Assumption>? _assumptions;
+
+    internal SignalTable(int count, IReadOnlyList<double> echoTimes, Func<IReadOnlyList<Assumption>> assume)
     {
         Count = count;
         Signed = new double[count];
@@ -16,9 +19,10 @@ public sealed class SignalTable
         LongitudinalBeforeExcitation = new double[count];
         LongitudinalAtEnd = new double[count];
         EchoTimes = echoTimes;
-        Echoes = new double[count * echoCount];
-        EchoMagnitudes = new double[count * echoCount];
-        Assumptions = assumptions;
+        LongitudinalAtStart = new double[count];
+        Echoes = new double[count * echoTimes.Count];
+        EchoMagnitudes = new double[count * echoTimes.Count];
+        _assume = assume;
     }
 
     /// <summary>Number of lanes.</summary>
@@ -36,6 +40,9 @@ public sealed class SignalTable
     /// <summary>Longitudinal magnetisation at the end of the readout (after the last echo, or after the flip-back), in units of M0.</summary>
     public double[] LongitudinalAtEnd { get; }
 
+    /// <summary>Longitudinal magnetisation at the start of a repetition, before its first pulse, in units of M0.</summary>
+    public double[] LongitudinalAtStart { get; }
+
     /// <summary>Times of the columns of <see cref="Echoes"/> after the excitation, ms; empty unless echoes were asked for.</summary>
     public IReadOnlyList<double> EchoTimes { get; }
 
@@ -46,5 +53,5 @@ public sealed class SignalTable
     public double[] EchoMagnitudes { get; }
 
     /// <summary>What the prediction takes for granted.</summary>
-    public IReadOnlyList<Assumption> Assumptions { get; }
+    public IReadOnlyList<Assumption> Assumptions => _assumptions ??= _assume();
 }

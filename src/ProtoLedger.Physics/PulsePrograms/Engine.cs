@@ -78,7 +78,7 @@ internal static unsafe class Engine
         var used = arguments.Count - first;
         var width = T.Width;
         var samples = arguments.Samples == null ? 0 : plan.SampleCount;
-        var size = (7 + plan.MultiplierCount + samples) * width;
+        var size = (7 + 2 * plan.MapCount + samples) * width;
         Span<double> memory = size <= 512 ? stackalloc double[size] : new double[size];
         fixed (double* start = memory)
         {
@@ -88,10 +88,10 @@ internal static unsafe class Engine
             tail.T1 = Fill(arguments.T1 + first, used, width, ref next);
             tail.T2 = Fill(arguments.T2 + first, used, width, ref next);
             tail.B1 = Fill(arguments.B1 + first, used, width, ref next);
-            tail.Multipliers = next;
-            tail.MultiplierStride = width;
-            for (var i = 0; i < plan.MultiplierCount; i++)
-                Fill(arguments.Multipliers + (long)i * arguments.MultiplierStride + first, used, width, ref next);
+            tail.Maps = next;
+            tail.MapStride = width;
+            for (var i = 0; i < 2 * plan.MapCount; i++)
+                Fill(arguments.Maps + (long)i * arguments.MapStride + first, used, width, ref next);
             tail.Signed = Reserve(width, ref next);
             tail.Before = Reserve(width, ref next);
             tail.End = Reserve(width, ref next);

@@ -17,11 +17,11 @@ internal unsafe struct EngineArguments
     /// <summary>B1+ scale.</summary>
     public double* B1;
 
-    /// <summary>Multiplier columns, one after the other, <see cref="MultiplierStride"/> apart.</summary>
-    public double* Multipliers;
+    /// <summary>Columns of the maps, <see cref="MapStride"/> apart: multiplier and recovery of the first, of the second, and so on.</summary>
+    public double* Maps;
 
-    /// <summary>Distance of the multiplier columns.</summary>
-    public int MultiplierStride;
+    /// <summary>Distance of the map columns.</summary>
+    public int MapStride;
 
     /// <summary>From which state the prediction starts.</summary>
     public StartState Start;

@@ -18,7 +18,7 @@ internal static unsafe partial class LaneBlock<T>
         // What was tipped: samples, and what a flip-back returns.
         c.P[train.Tipped.StartSlot] = c.M[train.Tipped.StartRephasingSlot] = sine * e2;
         c.Z[0] = zero;
-        CarryForward(train, train.Tipped, c, recovers: false, T.All(1), sine);
+        CarryForward(train, train.Tipped, c, recovers: false, sine);
         var returned = train.FlipBackAngle < 0 ? zero : -c.Sine[train.FlipBackAngle] * c.P[train.Tipped.EndSlot];
         signal = train.EffectiveIndex < 0 ? zero : c.Samples[train.FirstSample + train.EffectiveIndex];
 
@@ -26,19 +26,20 @@ internal static unsafe partial class LaneBlock<T>
         var kept = train.FlipBackAngle < 0 ? T.All(1) : c.Cosine[train.FlipBackAngle];
         c.P[train.Stayed.StartSlot] = c.M[train.Stayed.StartRephasingSlot] = zero;
         c.Z[0] = cosine * e1;
-        CarryForward(train, train.Stayed, c, recovers: false, T.All(-1), zero);
+        CarryForward(train, train.Stayed, c, recovers: false, zero);
         slope = T.MultiplyAdd(c.Z[0], kept, returned);
 
         c.P[train.Stayed.StartSlot] = c.M[train.Stayed.StartRephasingSlot] = zero;
         c.Z[0] = T.All(1) - e1;
-        CarryForward(train, train.Stayed, c, recovers: true, T.All(-1), zero);
+        CarryForward(train, train.Stayed, c, recovers: true, zero);
         offset = c.Z[0] * kept;
     }
 
-    /// <summary>Carries the states through the pulses; with a sine that is not zero it also reads the samples.</summary>
-    private static void CarryForward(TrainPlan train, ForwardRun run, in Coefficients c, bool recovers, T sign, T sine)
+    /// <summary>Carries the states through the pulses; what was tipped is also read at the samples.</summary>
+    private static void CarryForward(TrainPlan train, ForwardRun run, in Coefficients c, bool recovers, T sine)
     {
-        var reads = sign.Equals(T.All(-1)) ? [] : run.Samples;
+        var tipped = ReferenceEquals(run, train.Tipped);
+        var reads = tipped ? run.Samples : [];
         var read = 0;
         for (; read < reads.Length && reads[read].AfterPulse < 0; read++)
             c.Samples[train.FirstSample + read] = sine * c.E2[reads[read].Time];
@@ -50,7 +51,7 @@ internal static unsafe partial class LaneBlock<T>
             if (recovers && span.RecoverZ >= 0)
                 c.Z[0] += T.All(1) - c.E1[span.RecoverTime];
             if (span.FoldP >= 0)
-                c.P[span.FoldP] = sign * c.M[span.FoldM];
+                c.P[span.FoldP] = tipped ? c.M[span.FoldM] : -c.M[span.FoldM];
             for (; read < reads.Length && reads[read].AfterPulse == i; read++)
             {
                 var rest = c.E2[reads[read].Time];

@@ -23,7 +23,7 @@ internal static unsafe partial class LaneBlock<T>
         var c = new Coefficients(plan, memory);
         var rate1 = T.All(1) / T.Load(arguments.T1 + lane);
         var rate2 = T.All(1) / T.Load(arguments.T2 + lane);
-        c.Compute(plan, times, angles, rate1, rate2, T.Load(arguments.B1 + lane), plan.Uses.Length > 0 && NeedsForward(plan, arguments));
+        c.Compute(plan, times, angles, rate1, rate2, T.Load(arguments.B1 + lane), NeedsForward(plan, arguments));
 
         var a = T.All(1);
         var b = T.All(0);
@@ -38,10 +38,11 @@ internal static unsafe partial class LaneBlock<T>
                     a *= e;
                     b = T.MultiplyAdd(b, e, one - e);
                     break;
-                case BlockKind.Multiply:
-                    var m = T.Load(arguments.Multipliers + (long)block.Index * arguments.MultiplierStride + lane);
-                    a *= m;
-                    b *= m;
+                case BlockKind.Map:
+                    var columns = arguments.Maps + 2L * block.Index * arguments.MapStride + lane;
+                    var multiplier = T.Load(columns);
+                    a *= multiplier;
+                    b = T.MultiplyAdd(b, multiplier, T.Load(columns + arguments.MapStride));
                     break;
                 case BlockKind.Flip:
                     a *= c.Cosine[block.Index];
@@ -96,30 +97,21 @@ internal static unsafe partial class LaneBlock<T>
     private static void Through(
         TrainPlan train, in Coefficients c, ReadOnlySpan<double> times, T rate1, T rate2, bool samples, out T slope, out T offset, out T signal)
     {
-        var scaling = T.All(times[train.Duration]) * (rate2 - rate1);
         var limit = T.All(LargestScaling);
-        if (train.End is not null && !samples && !T.AnyLess(limit, scaling))
-        {
-            ThroughBackward(train, c, out slope, out offset, out signal);
-            return;
-        }
-
-        if (train.End is null || samples)
-        {
-            // All samples are wanted anyway, or the plan has no backward runs.
+        var scaling = T.All(times[train.Duration]) * (rate2 - rate1);
+        var extreme = T.AnyLess(limit, scaling);
+        if (extreme && !samples && train.End is not null)
+            c.ComputeForward(times, rate1, rate2);
+        if (extreme || samples || train.End is null)
             ThroughForward(train, c, out slope, out offset, out signal);
-            if (train.End is null || T.AnyLess(limit, scaling))
-                return;
-            ThroughBackward(train, c, out slope, out offset, out signal);
+        else
+            slope = offset = signal = T.All(0);
+        if (train.End is null)
             return;
-        }
-
-        c.ComputeForward(times, rate1, rate2);
-        ThroughForward(train, c, out var forwardSlope, out var forwardOffset, out var forwardSignal);
-        ThroughBackward(train, c, out slope, out offset, out signal);
-        slope = T.SelectLess(limit, scaling, forwardSlope, slope);
-        offset = T.SelectLess(limit, scaling, forwardOffset, offset);
-        signal = T.SelectLess(limit, scaling, forwardSignal, signal);
+        ThroughBackward(train, c, out var backwardSlope, out var backwardOffset, out var backwardSignal);
+        slope = T.SelectLess(limit, scaling, slope, backwardSlope);
+        offset = T.SelectLess(limit, scaling, offset, backwardOffset);
+        signal = T.SelectLess(limit, scaling, signal, backwardSignal);
     }
 
     private static void ThroughBackward(TrainPlan train, in Coefficients c, out T slope, out T offset, out T signal)

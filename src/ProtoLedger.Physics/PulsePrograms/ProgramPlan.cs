@@ -6,8 +6,8 @@ internal enum BlockKind
     /// <summary>Recovery; the index is a time.</summary>
     Relax,
 
-    /// <summary>Multiplication; the index is a multiplier column.</summary>
-    Multiply,
+    /// <summary>Multiplier and recovery of a pulse; the index is that of the map.</summary>
+    Map,
 
     /// <summary>A rotation whose transverse magnetisation is spoiled unused; the index is an angle.</summary>
     Flip,
@@ -32,7 +32,7 @@ internal sealed class ProgramPlan
         Blocks = blocks;
         Trains = trains;
         AngleCount = 1 + steps.Where(s => s.Kind is StepKind.Excite or StepKind.Refocus).Select(s => s.Slot).DefaultIfEmpty(-1).Max();
-        MultiplierCount = 1 + steps.Where(s => s.Kind is StepKind.Multiply).Select(s => s.Slot).DefaultIfEmpty(-1).Max();
+        MapCount = 1 + steps.Where(s => s.Kind is StepKind.Map).Select(s => s.Slot).DefaultIfEmpty(-1).Max();
         SampleCount = steps.Count(s => s.Kind == StepKind.Sample);
         DephasingSlots = trains.Select(t => t.DephasingSlots).DefaultIfEmpty(0).Max();
         StoredSlots = trains.Select(t => t.StoredSlots).DefaultIfEmpty(0).Max();
@@ -50,7 +50,7 @@ internal sealed class ProgramPlan
 
     public int AngleCount { get; }
 
-    public int MultiplierCount { get; }
+    public int MapCount { get; }
 
     public int SampleCount { get; }
 
@@ -77,11 +77,13 @@ internal sealed class ProgramPlan
                 continue;
             }
 
+            if (steps[i].Kind == StepKind.Spoil)
+                continue;
             Relax();
             switch (steps[i].Kind)
             {
-                case StepKind.Multiply:
-                    blocks.Add(new Block(BlockKind.Multiply, steps[i].Slot));
+                case StepKind.Map:
+                    blocks.Add(new Block(BlockKind.Map, steps[i].Slot));
                     break;
                 case StepKind.Excite:
                     var end = Array.FindIndex(steps, i, s => s.Kind == StepKind.Spoil);
@@ -96,8 +98,6 @@ internal sealed class ProgramPlan
                     trains.Add(new TrainPlanner(train, tables, pruned).Plan(samples, effectiveSample));
                     samples += trains[^1].SampleCount;
                     i += train.Length - 1;
-                    break;
-                case StepKind.Spoil:
                     break;
                 default:
                     throw new ArgumentException($"A {steps[i].Kind} needs an excitation before it.");

@@ -12,8 +12,8 @@ internal enum StepKind : byte
     /// <summary>Rotation about +y by the angle in the slot, times B1+: refocusing under the condition of Carr, Purcell, Meiboom and Gill.</summary>
     Refocus,
 
-    /// <summary>Longitudinal magnetisation times the multiplier column in the slot, transverse magnetisation spoiled: a pulse known by its response.</summary>
-    Multiply,
+    /// <summary>Longitudinal magnetisation times the multiplier plus the recovery of the slot's columns, transverse magnetisation spoiled: a pulse known by its response.</summary>
+    Map,
 
     /// <summary>One unit of gradient dephasing: every coherence moves up by one order.</summary>
     Dephase,
@@ -25,7 +25,7 @@ internal enum StepKind : byte
     Sample,
 }
 
-/// <summary>One step: its kind and the slot of its duration, angle or multiplier.</summary>
+/// <summary>One step: its kind and the slot of its duration, angle or map.</summary>
 /// <param name="Kind">What it does.</param>
-/// <param name="Slot">Index into the durations, angles or multiplier columns of the program; 0 where there is none.</param>
+/// <param name="Slot">Index into the durations, angles or map columns of the program; 0 where there is none.</param>
 internal readonly record struct PulseStep(StepKind Kind, int Slot = 0);

@@ -15,7 +15,7 @@ internal sealed class TrainPlanner(PulseStep[] steps, PlanTables tables, bool pr
     {
         if (steps[0].Kind != StepKind.Excite)
             throw new ArgumentException("A train starts with an excitation.");
-        if (steps.AsSpan(1, _bodyEnd - 1).ContainsAny([StepKind.Excite, StepKind.Multiply, StepKind.Spoil]))
+        if (steps[1.._bodyEnd].Any(s => s.Kind is StepKind.Excite or StepKind.Map or StepKind.Spoil))
             throw new ArgumentException("Between excitation and spoil a train has waits, dephasing, refocusing pulses and samples only.");
 
         var samples = Positions(StepKind.Sample);

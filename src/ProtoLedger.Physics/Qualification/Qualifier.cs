@@ -3,13 +3,28 @@ namespace ProtoLedger.Physics.Qualification;
 /// <summary>Evaluates reference files with the public engine: what a physicist qualifies an installation with.</summary>
 public static class Qualifier
 {
+    private static readonly IProtocolFamily[] ProtocolFamilies =
+    [
+        new SpinEchoFamily("spin_echo"),
+        new MultiEchoSpinEchoFamily(),
+        new SpinEchoFamily("echo_train_steady_state"),
+        new SpinEchoFamily("driven_equilibrium"),
+        new InversionRecoveryFamily(),
+        new DoubleInversionRecoveryFamily(),
+        new SpoiledGradientEchoFamily(),
+        new BalancedFamily(),
+        new InversionGradientTrainFamily(),
+        new DiffusionSpinEchoFamily(),
+    ];
+
     /// <summary>Every family the engine has. A new family is one class and one line here.</summary>
     private static readonly Dictionary<string, IQualificationFamily> Families = new IQualificationFamily[]
     {
+        new SensitivitiesFamily(ProtocolFamilies),
         new InversionPulsesFamily(),
         new SliceProfileFamily(),
         new FatSaturationFamily(),
-    }.ToDictionary(f => f.Name);
+    }.Concat(ProtocolFamilies).ToDictionary(f => f.Name);
 
     /// <summary>Computes every case of a file.</summary>
     /// <param name="file">The file.</param>

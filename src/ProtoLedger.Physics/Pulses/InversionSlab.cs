@@ -6,21 +6,25 @@ namespace ProtoLedger.Physics.Pulses;
 /// <remarks>
 /// Both pulses are evaluated at z and off-resonance with their own gradient and polarity; nothing is assumed to cancel. Shift of the slab against the slice:
 /// −Δf · (1/slab Hz per slice − 1/slice Hz per slice) slice thicknesses. The mean over the slice weighs each z with the transverse magnetisation that the
-/// excitation makes of it; it is signed, since prepared and unprepared spins of one voxel add before the magnitude is taken.
+/// excitation makes of it and, in a spin echo, with the share that is refocused; it is signed, since prepared and unprepared spins of one voxel add before the magnitude is taken.
 /// </remarks>
 /// <param name="Inversion">Inversion pulse, polarity, slab thickness over slice thickness.</param>
 /// <param name="Excitation">Excitation of the slice.</param>
-public sealed record InversionSlab(SliceSelection Inversion, SliceSelection Excitation)
+/// <param name="Refocusing">Refocusing of the slice; null for a gradient echo.</param>
+public sealed record InversionSlab(SliceSelection Inversion, SliceSelection Excitation, SliceSelection? Refocusing = null)
 {
     private const int Intervals = 64;
     private const double Reach = 1.5;
 
     /// <summary>Slab of an inversion of a series; null where the inversion is not selective or known by its efficiency alone.</summary>
     /// <param name="inversion">The preparation.</param>
-    /// <param name="excitation">Excitation of the slice; null for the assumed one.</param>
-    public static InversionSlab? Of(Inversion inversion, SliceSelection? excitation = null) =>
+    /// <param name="readout">What images the slice: a spin echo selects it twice; null for an excitation alone. Pulses are the assumed ones of <see cref="SliceSelection"/>.</param>
+    public static InversionSlab? Of(Inversion inversion, Readout? readout = null) =>
         inversion is { SlabThickness: { } thickness, Pulse: not (EfficiencyInversion or HardPulse { Duration: 0 }) }
-            ? new InversionSlab(new SliceSelection(inversion.Pulse, GradientPolarity.Positive, thickness), excitation ?? SliceSelection.DefaultExcitation)
+            ? new InversionSlab(
+                new SliceSelection(inversion.Pulse, GradientPolarity.Positive, thickness),
+                SliceSelection.DefaultExcitation,
+                readout is SpinEcho or EchoTrain or DiffusionSpinEcho ? SliceSelection.DefaultRefocusing : null)
             : null;
 
     /// <summary>Shift of the middle of the slab against the middle of the slice, slice thicknesses.</summary>
@@ -48,24 +52,40 @@ public sealed record InversionSlab(SliceSelection Inversion, SliceSelection Exci
     {
         if (offResonanceHz.Length != b1Scale.Length || multiplier.Length != b1Scale.Length)
             throw new ArgumentException($"Lanes differ in number: {b1Scale.Length} B1+ scales, {offResonanceHz.Length} off-resonances, {multiplier.Length} results.");
-        var z = new double[Intervals + 1];
-        var (weight, rest, inverted) = (new double[z.Length], new double[z.Length], new double[z.Length]);
-        for (var lane = 0; lane < b1Scale.Length; lane++)
-        {
-            // The integration follows the slice that is imaged, wherever off-resonance puts it.
-            var middle = Excitation.ShiftAt(offResonanceHz[lane]);
-            for (var i = 0; i < z.Length; i++)
-                z[i] = middle + Reach * (2.0 * i / Intervals - 1);
-            SliceProfile.Excitation(Excitation, b1Scale[lane], offResonanceHz[lane], z, weight, rest);
-            Profile(b1Scale[lane], offResonanceHz[lane], z, inverted);
-            double sum = 0, total = 0;
-            for (var i = 0; i < z.Length; i++)
-            {
-                sum += SliceProfile.Simpson(i, z.Length) * weight[i] * inverted[i];
-                total += SliceProfile.Simpson(i, z.Length) * weight[i];
-            }
+        var points = FieldPoints.Distinct(b1Scale, offResonanceHz);
+        var means = new double[points.Count];
+        for (var i = 0; i < means.Length; i++)
+            means[i] = MeanMultiplier(points.B1Scale[i], points.OffResonanceHz[i]);
+        for (var lane = 0; lane < multiplier.Length; lane++)
+            multiplier[lane] = means[points.PointOf[lane]];
+    }
 
-            multiplier[lane] = sum / total;
+    private double MeanMultiplier(double b1Scale, double offResonanceHz)
+    {
+        // The integration follows the slice that is imaged, wherever off-resonance puts it.
+        var z = SliceProfile.Positions(Reach, Intervals);
+        var middle = Excitation.ShiftAt(offResonanceHz);
+        for (var i = 0; i < z.Length; i++)
+            z[i] += middle;
+        var (weight, rest, inverted) = (new double[z.Length], new double[z.Length], new double[z.Length]);
+        SliceProfile.Excitation(Excitation, b1Scale, offResonanceHz, z, weight, rest);
+        if (Refocusing is not null)
+        {
+            var refocused = new double[z.Length];
+            SliceProfile.Refocusing(Refocusing, b1Scale, offResonanceHz, z, refocused, rest);
+            for (var i = 0; i < z.Length; i++)
+                weight[i] *= refocused[i];
         }
+
+        Profile(b1Scale, offResonanceHz, z, inverted);
+        double sum = 0, total = 0;
+        for (var i = 0; i < z.Length; i++)
+        {
+            var share = SliceProfile.Simpson(i, z.Length) * weight[i];
+            sum += share * inverted[i];
+            total += share;
+        }
+
+        return sum / total;
     }
 }

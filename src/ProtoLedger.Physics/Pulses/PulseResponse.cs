@@ -12,6 +12,9 @@ public static class PulseResponse
     /// <summary>Largest off-resonance that is integrated, Hz, either sign.</summary>
     public const double LargestOffResonanceHz = 20_000;
 
+    /// <summary>Largest B1+ scale that is integrated.</summary>
+    public const double LargestB1Scale = 4;
+
     /// <summary>Longitudinal magnetisation without relaxation during the pulse: Mz → multiplier · Mz, transverse zero before.</summary>
     /// <param name="pulse">Any pulse; an <see cref="EfficiencyInversion"/> gives −f, whatever B1+ and off-resonance are.</param>
     /// <param name="b1Scale">n values, actual over nominal amplitude, ≥ 0.</param>
@@ -28,14 +31,16 @@ public static class PulseResponse
             return;
         }
 
-        var parts = new double[3 * b1Scale.Length];
-        var n = b1Scale.Length;
-        var rotation = new CayleyKleinLanes(multiplier, parts.AsSpan(0, n), parts.AsSpan(n, n), parts.AsSpan(2 * n));
-        Rotation(pulse, b1Scale, offResonanceHz, rotation);
-        for (var i = 0; i < n; i++)
+        // Lanes that differ in tissue alone meet the same pulse: each pair of B1+ scale and off-resonance is integrated once.
+        var points = FieldPoints.Distinct(b1Scale, offResonanceHz);
+        var n = points.Count;
+        var parts = new double[4 * n];
+        var rotation = new CayleyKleinLanes(parts.AsSpan(0, n), parts.AsSpan(n, n), parts.AsSpan(2 * n, n), parts.AsSpan(3 * n));
+        Rotation(pulse, points.B1Scale, points.OffResonanceHz, rotation);
+        for (var i = 0; i < multiplier.Length; i++)
         {
-            var b = rotation.BReal[i] * rotation.BReal[i] + rotation.BImaginary[i] * rotation.BImaginary[i];
-            multiplier[i] = 1 - 2 * b;
+            var (real, imaginary) = (rotation.BReal[points.PointOf[i]], rotation.BImaginary[points.PointOf[i]]);
+            multiplier[i] = 1 - 2 * (real * real + imaginary * imaginary);
         }
     }
 
@@ -105,8 +110,8 @@ public static class PulseResponse
         {
             if (!(Math.Abs(offResonanceHz[i]) <= LargestOffResonanceHz))
                 throw new ArgumentOutOfRangeException(nameof(offResonanceHz), offResonanceHz[i], $"Pulses are integrated within ±{LargestOffResonanceHz} Hz.");
-            if (!(b1Scale[i] is >= 0 and <= 3))
-                throw new ArgumentOutOfRangeException(nameof(b1Scale), b1Scale[i], "Pulses are integrated for B1+ scales from 0 to 3.");
+            if (!(b1Scale[i] is >= 0 and <= LargestB1Scale))
+                throw new ArgumentOutOfRangeException(nameof(b1Scale), b1Scale[i], $"Pulses are integrated for B1+ scales from 0 to {LargestB1Scale}.");
         }
     }
 }

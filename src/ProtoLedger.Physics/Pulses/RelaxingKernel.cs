@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using System.Runtime.Intrinsics;
 
 namespace ProtoLedger.Physics.Pulses;
@@ -38,6 +39,7 @@ internal static class RelaxingKernel
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void Run(PulseSteps steps, Span<double> lanes)
     {
         var scale = Vector512.Create<double>(lanes);
@@ -46,50 +48,42 @@ internal static class RelaxingKernel
         var r1 = step / Vector512.Create<double>(lanes[(2 * Width)..]);
         var r2 = step / Vector512.Create<double>(lanes[(3 * Width)..]);
         var difference = r2 - r1;
-        var (kept, grown) = (new Vector(z: Vector512<double>.One), new Vector(Vector512<double>.Zero));
+        var zero = Vector512<double>.Zero;
+
+        // Kept: from Mz = 1 without regrowth. Grown: from rest with regrowth.
+        var (keptX, keptY, keptZ) = (zero, zero, Vector512<double>.One);
+        var (grownX, grownY, grownZ) = (zero, zero, zero);
         for (var k = 0; k < steps.X.Length; k++)
         {
             var slope = scale * steps.Slope[k];
-            var generator = new Generator(
-                scale * steps.X[k],
-                precession * slope + scale * steps.Y[k],
-                precession - Vector512.Create(steps.Sweep[k]),
-                slope * difference,
-                r1,
-                r2);
-            var term = generator.Apply(kept);
-            var regrowth = generator.Apply(grown) + new Vector(Vector512<double>.Zero, slope * r1, r1);
-            (kept, grown) = (kept + term, grown + regrowth);
-            for (var order = 2; order <= Order; order++)
+            var x = scale * steps.X[k];
+            var y = precession * slope + scale * steps.Y[k];
+            var z = precession - Vector512.Create(steps.Sweep[k]);
+            var shear = slope * difference;
+            var (raised, lowered) = (x + shear, x - shear);
+
+            // Terms of the series of exp: each is the generator's action on the one before, over its order.
+            var (termX, termY, termZ) = (keptX, keptY, keptZ);
+            var (restX, restY, restZ) = (grownX, grownY, grownZ);
+            var (sourceY, sourceZ) = (slope * r1, r1);
+            for (var order = 1; order <= Order; order++)
             {
-                (term, regrowth) = (generator.Apply(term) * (1.0 / order), generator.Apply(regrowth) * (1.0 / order));
-                (kept, grown) = (kept + term, grown + regrowth);
+                var share = Vector512.Create(1.0 / order);
+                (termX, termY, termZ) = (
+                    share * (y * termZ - z * termY - r2 * termX),
+                    share * (z * termX - lowered * termZ - r2 * termY),
+                    share * (raised * termY - y * termX - r1 * termZ));
+                (restX, restY, restZ) = (
+                    share * (y * restZ - z * restY - r2 * restX),
+                    share * (z * restX - lowered * restZ - r2 * restY + sourceY),
+                    share * (raised * restY - y * restX - r1 * restZ + sourceZ));
+                (keptX, keptY, keptZ) = (keptX + termX, keptY + termY, keptZ + termZ);
+                (grownX, grownY, grownZ) = (grownX + restX, grownY + restY, grownZ + restZ);
+                (sourceY, sourceZ) = (zero, zero);
             }
         }
 
-        kept.Z.CopyTo(lanes[(4 * Width)..]);
-        grown.Z.CopyTo(lanes[(5 * Width)..]);
-    }
-
-    private readonly struct Vector
-    {
-        public readonly Vector512<double> X, Y, Z;
-
-        public Vector(Vector512<double> z) => Z = z;
-
-        public Vector(Vector512<double> x, Vector512<double> y, Vector512<double> z) => (X, Y, Z) = (x, y, z);
-
-        public static Vector operator +(Vector a, Vector b) => new(a.X + b.X, a.Y + b.Y, a.Z + b.Z);
-
-        public static Vector operator *(Vector a, double factor) => new(a.X * factor, a.Y * factor, a.Z * factor);
-    }
-
-    private readonly struct Generator(
-        Vector512<double> x, Vector512<double> y, Vector512<double> z, Vector512<double> shear, Vector512<double> r1, Vector512<double> r2)
-    {
-        public Vector Apply(Vector m) => new(
-            y * m.Z - z * m.Y - r2 * m.X,
-            z * m.X - (x - shear) * m.Z - r2 * m.Y,
-            (x + shear) * m.Y - y * m.X - r1 * m.Z);
+        keptZ.CopyTo(lanes[(4 * Width)..]);
+        grownZ.CopyTo(lanes[(5 * Width)..]);
     }
 }

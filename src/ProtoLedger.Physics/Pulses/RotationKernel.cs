@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using System.Runtime.Intrinsics;
 
 namespace ProtoLedger.Physics.Pulses;
@@ -32,6 +33,7 @@ internal static class RotationKernel
         }
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static void Run(PulseSteps steps, Span<double> lanes)
     {
         var scale = Vector512.Create<double>(lanes);
@@ -60,6 +62,7 @@ internal static class RotationKernel
     }
 
     /// <summary>cos √u for u in [0, 1].</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static Vector512<double> Cosine(Vector512<double> u)
     {
         var r = Vector512.Create(1 / 20922789888000.0);
@@ -74,6 +77,7 @@ internal static class RotationKernel
     }
 
     /// <summary>sin √u / (2 √u) for u in [0, 1].</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static Vector512<double> HalfSine(Vector512<double> u)
     {
         var r = Vector512.Create(0.5 / 355687428096000.0);

@@ -200,7 +200,7 @@ public sealed class ReadDocuments(Commands commands, DocumentShelf shelf, TimePr
             || await stores.ChangeRequests.FindReportAsync(id, request.Sha256, request.Round, cancellationToken) is not { } report
             || await stores.Ledger.FindBlobAsync(report.JsonSha256, cancellationToken) is not { } json)
             return [];
-        return [.. (JsonNode.Parse(json)?["findings"]?.AsArray() ?? [])
+        return [.. (JsonNode.Parse(json)?["content"]?["findings"]?.AsArray() ?? [])
             .Select(finding => finding?["sentence"]?.GetValue<string>())
             .OfType<string>()];
     }

@@ -24,7 +24,7 @@ public interface IRunStore
     /// <param name="cancellationToken">Stops it.</param>
     Task<IReadOnlyList<RunRow>> ListAsync(long? before, int limit, CancellationToken cancellationToken);
 
-    /// <summary>Newest completed run before a number, or null.</summary>
+    /// <summary>Newest completed run before a number whose baseline is that of record (not one with a proposed document in it), or null.</summary>
     /// <param name="before">Number.</param>
     /// <param name="cancellationToken">Stops it.</param>
     Task<RunRow?> PreviousCompletedAsync(long before, CancellationToken cancellationToken);

@@ -4,6 +4,8 @@ using ProtoLedger.Application.ChangeRequests;
 using ProtoLedger.Application.Commanding;
 using ProtoLedger.Application.Documents;
 using ProtoLedger.Application.History;
+using ProtoLedger.Application.Importing;
+using ProtoLedger.Application.Reporting;
 using ProtoLedger.Application.Runs;
 using ProtoLedger.Application.Site;
 
@@ -32,5 +34,6 @@ public static class ApplicationServices
         typeof(DeclineChangeRequest), typeof(ApproveChangeRequest), typeof(RebaseChangeRequest), typeof(MakeEffective),
         typeof(ReadChangeRequests), typeof(AddComment), typeof(ReadDocuments), typeof(ReadRuns), typeof(EnqueueRun), typeof(ReadLedger), typeof(ReadAudit), typeof(PrepareSite),
         typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
+        typeof(ImportStore), typeof(PrepareDemo), typeof(RunWorker), typeof(ChangeReports), typeof(CompareRuns),
     ];
 }

@@ -1,7 +1,7 @@
 namespace ProtoLedger.Reports.Wording;
 
 /// <summary>What an observable is called in a table, and how its values are written.</summary>
-internal static class ObservableWords
+public static class ObservableWords
 {
     /// <summary>A short name with the tissues it speaks of; the name itself where it is not a known one.</summary>
     public static string Label(string observable, string? subject, string? reference)

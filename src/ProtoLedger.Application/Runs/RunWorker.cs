@@ -221,8 +221,8 @@ public sealed class RunWorker
         return (run, RunPlan.Parse(bytes!));
     }
 
-    private Task GiveBackAsync(RunJob job, string failure, CancellationToken cancellationToken) =>
-        transactions.WriteAsync<bool>(
+    private async Task GiveBackAsync(RunJob job, string failure, CancellationToken cancellationToken) =>
+        await transactions.WriteAsync<bool>(
             async stores =>
             {
                 await stores.Runs.GiveBackAsync(job, failure, cancellationToken);

@@ -14,7 +14,7 @@ internal static partial class Details
         foreach (var repair in report.Repairs)
         {
             var changes = ReportWords.Join([.. repair.Changes.Select(c =>
-                $"{ReportWords.Code(c.Parameter)} {Numbers.Setting(c.From)} to {ObservableWords.WithUnit(Numbers.Setting(c.To), UserText.Literal(c.Unit))}")]);
+                $"{ReportWords.Code(c.Parameter)} {Numbers.Setting(c.From)} to {ReportWords.WithUnit(Numbers.Setting(c.To), c.Unit)}")]);
             page.Heading(3, $"{UserText.Literal(ReportWords.Capital(repair.ExpectationTitle))}: {UserText.Literal(repair.SeriesTitle)}, {words.Scanner(repair.ScannerId)}")
                 .Paragraph($"Change {changes}. The expectation then holds for {Numbers.Share(repair.ProbabilityHolds)} of plausible tissue values.");
             if (repair.Costs.Count == 0)
@@ -24,7 +24,7 @@ internal static partial class Details
                     ["Cost", " Base version", " With the repair", "Direction"],
                     repair.Costs.Select(cost =>
                     {
-                        var (old, @new) = ObservableWords.Values(cost.Observable, cost.Before, cost.After, cost.Unit);
+                        var (old, @new) = ReportWords.Values(cost.Observable, cost.Before, cost.After, cost.Unit);
                         return (IReadOnlyList<string>)[ReportWords.Label(cost.Observable, cost.Subject, cost.Reference), old, @new, Mark.Of(cost.Direction).ToString()];
                     }));
         }
@@ -50,7 +50,7 @@ internal static partial class Details
             ["Protocol", " Version", "Scanner", "In use", "Moved most", " Old", " New", " Newly failing"],
             report.Touched.Select(t =>
             {
-                var (old, @new) = ObservableWords.Values(t.Observable, t.Before, t.After, t.Unit);
+                var (old, @new) = ReportWords.Values(t.Observable, t.Before, t.After, t.Unit);
                 return (IReadOnlyList<string>)
                 [
                     $"{UserText.Literal(t.Title)} ({ReportWords.Code(t.ProtocolId)})",

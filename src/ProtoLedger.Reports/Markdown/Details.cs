@@ -76,7 +76,7 @@ internal static partial class Details
 
     private static IReadOnlyList<string> Effect(PredictedEffect effect)
     {
-        var (old, @new) = ObservableWords.Values(effect.Observable, effect.Before?.Nominal, effect.After?.Nominal, effect.Unit);
+        var (old, @new) = ReportWords.Values(effect.Observable, effect.Before?.Nominal, effect.After?.Nominal, effect.Unit);
         return
         [
             ReportWords.Label(effect.Observable, effect.Subject, effect.Reference),
@@ -92,7 +92,7 @@ internal static partial class Details
     {
         if (value is null || value.High - value.Low <= 1e-9)
             return "";
-        var (low, high) = ObservableWords.Values(effect.Observable, value.Low, value.High, effect.Unit == "s" ? "s" : "");
+        var (low, high) = ReportWords.Values(effect.Observable, value.Low, value.High, effect.Unit == "s" ? "s" : "");
         return $" ({low} to {high})";
     }
 
@@ -109,8 +109,8 @@ internal static partial class Details
         {
             var table = report.Attributions[i];
             page.Heading(3, $"{ReportWords.Label(table.Observable, table.Subject, table.Reference)}: {UserText.Literal(table.SeriesTitle)}, {words.Scanner(table.ScannerId)}, {UserText.Literal(table.Lane)}");
-            var (old, @new) = ObservableWords.Values(table.Observable, table.Before, table.After, table.Unit);
-            var (seen, sees) = ObservableWords.Values(table.Observable, table.MagnitudeBefore, table.MagnitudeAfter, table.Unit);
+            var (old, @new) = ReportWords.Values(table.Observable, table.Before, table.After, table.Unit);
+            var (seen, sees) = ReportWords.Values(table.Observable, table.MagnitudeBefore, table.MagnitudeAfter, table.Unit);
             page.Paragraph($"Signed: {old} to {@new}. Without sign, as the image shows it: {seen} to {sees}.{(table.Exact ? "" : " Orders were sampled; the standard error is stated.")}");
             if (figures.Attributions[i] is { } figure)
                 Plot(page, figure);
@@ -133,7 +133,7 @@ internal static partial class Details
                 $"{UserText.Literal(ReportWords.Capital(v.Title))} ({ReportWords.Code(v.ExpectationId)})",
                 UserText.Literal(v.Why),
                 $"{UserText.Literal(v.SeriesTitle)}, {words.Scanner(v.ScannerId)}, {UserText.Literal(v.Condition)}",
-                $"{(v.AtMost ? "at most" : "at least")} {ObservableWords.WithUnit(Numbers.Setting(v.Limit), v.Unit)}{(v.Paired ? ", new over old" : "")}",
+                $"{(v.AtMost ? "at most" : "at least")} {ReportWords.WithUnit(Numbers.Setting(v.Limit), v.Unit)}{(v.Paired ? ", new over old" : "")}",
                 State(v.Before, v.Unit),
                 State(v.After, v.Unit),
             ]));
@@ -144,7 +144,7 @@ internal static partial class Details
     {
         if (state is null)
             return "none";
-        var value = state.Value is { } v ? $" at {ObservableWords.WithUnit(Numbers.Plain(v), unit)}" : "";
+        var value = state.Value is { } v ? $" at {ReportWords.WithUnit(Numbers.Plain(v), unit)}" : "";
         var probability = state.Probability is { } p ? $"; probability {Numbers.Probability(p)}" : "";
         var nominal = state.Value is null ? "" : state.NominalHolds ? "; at mean values it holds" : "; at mean values it fails";
         return $"{Mark.Of(state.Verdict)}{value}{probability}{nominal}";

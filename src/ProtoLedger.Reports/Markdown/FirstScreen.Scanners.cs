@@ -79,7 +79,7 @@ internal static partial class FirstScreen
         var fit = scanner.SlicesFit ? "" : "The slices no longer fit in the repetition time. ";
         if (finding is not { Observable: { } name })
             return fit.Length > 0 ? fit.TrimEnd() : "no change that matters";
-        var (old, @new) = ObservableWords.Values(name, finding.Before, finding.After, finding.Unit);
+        var (old, @new) = ReportWords.Values(name, finding.Before, finding.After, finding.Unit);
         return $"{fit}{ReportWords.Label(name, finding.Subject, finding.Reference)}: {old} to {@new}";
     }
 }

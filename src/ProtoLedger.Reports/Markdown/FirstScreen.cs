@@ -79,7 +79,7 @@ internal static partial class FirstScreen
     {
         if (finding.Observable is not { } name)
             return words.Scanner(finding.ScannerId);
-        var (old, @new) = ObservableWords.Values(name, finding.Before, finding.After, finding.Unit);
+        var (old, @new) = ReportWords.Values(name, finding.Before, finding.After, finding.Unit);
         return $"{words.Scanner(finding.ScannerId)}, {old} to {@new}";
     }
 
@@ -116,7 +116,7 @@ internal static partial class FirstScreen
                 .OrderBy(item => item.Direction switch { FindingDirection.Better => 0, FindingDirection.Worse => 1, FindingDirection.Different => 2, _ => 3 })
                 .Select(item =>
                 {
-                    var (old, @new) = ObservableWords.Values("", item.Before, item.After, item.Unit);
+                    var (old, @new) = ReportWords.Values("", item.Before, item.After, item.Unit);
                     return (IReadOnlyList<string>)
                     [
                         Mark.Of(item.Direction).ToString(),

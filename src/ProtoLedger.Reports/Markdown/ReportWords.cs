@@ -4,23 +4,14 @@ using ProtoLedger.Reports.Wording;
 namespace ProtoLedger.Reports.Markdown;
 
 /// <summary>Phrases that several sections of a change report need.</summary>
-internal sealed class ReportWords
+internal sealed class ReportWords(ChangeReport report)
 {
-    private readonly Dictionary<string, string> titles;
-    private readonly int scannerCount;
-
-    public ReportWords(ChangeReport report)
-    {
-        titles = report.Scanners.ToDictionary(s => s.ScannerId, s => s.Title, StringComparer.Ordinal);
-        scannerCount = report.Scanners.Count;
-    }
-
     /// <summary>A scanner's title as literal text.</summary>
-    public string Scanner(string id) => UserText.Literal(titles.GetValueOrDefault(id, id));
+    public string Scanner(string id) => UserText.Literal(report.Scanners.FirstOrDefault(s => s.ScannerId == id)?.Title ?? id);
 
     /// <summary>Titles joined, "all scanners" where none is named or all are.</summary>
     public string Scanners(IReadOnlyCollection<string> ids) =>
-        ids.Count == 0 || (ids.Count == scannerCount && scannerCount > 1) ? "all scanners" : Join(ids.Select(Scanner).ToList());
+        ids.Count == 0 || (ids.Count == report.Scanners.Count && ids.Count > 1) ? "all scanners" : Join(ids.Select(Scanner).ToList());
 
     /// <summary>"a", "a and b", "a, b and c".</summary>
     public static string Join(IReadOnlyList<string> parts) => parts.Count switch
@@ -44,6 +35,16 @@ internal sealed class ReportWords
     /// <summary>An observable's name in a table, as literal text.</summary>
     public static string Label(string observable, string? subject, string? reference) =>
         UserText.Literal(Capital(ObservableWords.Label(observable, subject, reference)));
+
+    /// <summary>Old and new with their unit, as literal text.</summary>
+    public static (string Old, string New) Values(string observable, double? before, double? after, string unit)
+    {
+        var (old, @new) = ObservableWords.Values(observable, before, after, unit);
+        return (UserText.Literal(old), UserText.Literal(@new));
+    }
+
+    /// <summary>A number with its unit, as literal text.</summary>
+    public static string WithUnit(string number, string unit) => UserText.Literal(ObservableWords.WithUnit(number, unit));
 
     /// <summary>A count and its noun.</summary>
     public static string Count(int number, string one, string many) => $"{Numbers.Whole(number)} {(number == 1 ? one : many)}";

@@ -36,7 +36,7 @@ internal static class Png
     private static byte[] Compress(ReadOnlySpan<byte> pixels, int width, int height)
     {
         using var packed = new MemoryStream();
-        using (var zlib = new ZLibStream(packed, CompressionLevel.SmallestSize, leaveOpen: true))
+        using (var zlib = new ZLibStream(packed, CompressionLevel.Optimal, leaveOpen: true))
         {
             var line = new byte[width + 1];
             line[0] = UpFilter;

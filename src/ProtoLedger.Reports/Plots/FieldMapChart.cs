@@ -9,7 +9,7 @@ public static class FieldMapChart
     private const double Left = 62;
     private const double CellHeight = 26;
     private const int Shades = 5;
-    private static readonly string[] Colours = ["#f3f6f7", "#d6e3ea", "#b3cede", "#8db8d2", "#66a1c5"];
+    private static readonly string[] Colours = ["#f3f6f7", "#d6e3ea", "#b3cede", "#8db8d2", "#74abcc"];
 
     /// <summary>Draws a map.</summary>
     /// <param name="name">Name of the figure.</param>

@@ -10,8 +10,7 @@ public sealed class ReportFigures
     public ReportFigures(ChangeReport report)
     {
         ArgumentNullException.ThrowIfNull(report);
-        var titles = report.Scanners.ToDictionary(s => s.ScannerId, s => s.Title, StringComparer.Ordinal);
-        string Title(string id) => titles.GetValueOrDefault(id, id);
+        string Title(string id) => report.Scanners.FirstOrDefault(s => s.ScannerId == id)?.Title ?? id;
         Pictures = [.. report.Appearances.Select((a, i) => AppearancePictures.Draw($"appearance-{i + 1}", a, Title(a.ScannerId)))];
         Signals = [.. report.Appearances.Select((a, i) => a.Tissues.Count == 0 ? null : SignalChart.Draw($"signals-{i + 1}", a, Title(a.ScannerId)))];
         Attributions = [.. report.Attributions.Select((a, i) => a.Contributions.Count == 0 ? null : AttributionChart.Draw($"attribution-{i + 1}", a, Title(a.ScannerId)))];

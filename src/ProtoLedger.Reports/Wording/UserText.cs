@@ -10,8 +10,11 @@ internal static class UserText
     private const string Markup = "\\`*_[]<>&|~!^${}@";
 
     /// <summary>The text on one line, with direction overrides, zero-width and control characters shown by their code point.</summary>
+    /// <exception cref="ArgumentException">The text holds half of a surrogate pair.</exception>
     public static string Visible(string text)
     {
+        if (HoldsHalfAPair(text))
+            throw new ArgumentException("A text holds half of a surrogate pair, which no UTF-8 file can carry.", nameof(text));
         var shown = new StringBuilder(text.Length);
         var space = false;
         foreach (var rune in text.EnumerateRunes())
@@ -60,7 +63,21 @@ internal static class UserText
         return marks ? text.Insert(sign, "\\") : text;
     }
 
+    private static bool HoldsHalfAPair(string text)
+    {
+        for (var i = 0; i < text.Length; i++)
+        {
+            if (!char.IsSurrogate(text[i]))
+                continue;
+            if (i + 1 == text.Length || !char.IsSurrogatePair(text[i], text[i + 1]))
+                return true;
+            i++;
+        }
+
+        return false;
+    }
+
     private static bool IsHidden(Rune rune) =>
         Rune.GetUnicodeCategory(rune) is UnicodeCategory.Control or UnicodeCategory.Format
-            or UnicodeCategory.PrivateUse or UnicodeCategory.OtherNotAssigned or UnicodeCategory.Surrogate;
+            or UnicodeCategory.PrivateUse or UnicodeCategory.OtherNotAssigned;
 }

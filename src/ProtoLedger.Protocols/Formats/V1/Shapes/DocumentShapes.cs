@@ -204,7 +204,7 @@ internal static class DocumentShapes
     private static ObjectShape Measured(NumberShape mean, double highestSd, string unit) => Line(
         "measured value",
         Required("mean", mean, "mean"),
-        Required("sd", Above(0, highestSd, unit), "standard deviation"),
+        Required("sd", From(0, highestSd, unit), "standard deviation"),
         Required("source", Prose, "source"),
         Required("evidence", OneOf("seen", "secondHand", "recalled", "estimated"), "evidence"));
 }

@@ -8,7 +8,7 @@ using ProtoLedger.Protocols.Formats.V1.Shapes;
 namespace ProtoLedger.Protocols.Formats;
 
 /// <summary>JSON Schema (draft 2020-12) of each kind of document, for editors. The reader itself checks more.</summary>
-public static class JsonSchema
+public static class JsonSchemas
 {
     private static readonly JsonSerializerOptions Indented = new()
     {

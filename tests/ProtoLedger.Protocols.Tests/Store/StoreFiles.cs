@@ -1,0 +1,42 @@
+using ProtoLedger.Protocols.Documents;
+using ProtoLedger.Protocols.Formats;
+using ProtoLedger.Protocols.Store;
+using ProtoLedger.Protocols.Validation;
+
+namespace ProtoLedger.Protocols.Tests.Store;
+
+/// <summary>The protocol store of the repository.</summary>
+internal static class StoreFiles
+{
+    public static string Folder { get; } = Path.Combine(Root(), "protocol-store");
+
+    public static IReadOnlyList<HistoryEntry> History { get; } = StoreReader.ReadHistory(Text("history.yaml")).Require();
+
+    public static IReadOnlyList<StorePerson> People { get; } = StoreReader.ReadPeople(Text("people.yaml")).Require();
+
+    /// <summary>Paths of all documents, below the folder, with forward slashes.</summary>
+    public static IReadOnlyList<string> Documents { get; } =
+    [
+        .. Directory.EnumerateFiles(Folder, "*.yaml", SearchOption.AllDirectories)
+            .Select(path => Path.GetRelativePath(Folder, path).Replace('\\', '/'))
+            .Where(path => path.Contains('/', StringComparison.Ordinal))
+            .Order(StringComparer.Ordinal),
+    ];
+
+    public static string Text(string path) => File.ReadAllText(Path.Combine(Folder, path));
+
+    public static ParseResult.Parsed Read(string path) => Samples.Read(Text(path));
+
+    public static ParseResult.Parsed Read(HistoryEntry entry) => Read(entry.Path);
+
+    /// <summary>The newest version of every document.</summary>
+    public static DocumentSet Newest() => new(History.Where(entry => entry.Version is not null).Select(entry => Read(entry).Document));
+
+    private static string Root()
+    {
+        var folder = new DirectoryInfo(AppContext.BaseDirectory);
+        while (folder is not null && !File.Exists(Path.Combine(folder.FullName, "ProtoLedger.sln")))
+            folder = folder.Parent;
+        return folder?.FullName ?? throw new DirectoryNotFoundException("The tests run outside the repository.");
+    }
+}

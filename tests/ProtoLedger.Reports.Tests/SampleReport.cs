@@ -101,8 +101,8 @@ internal static class SampleReport
                     "linden-3t", "Axial fluid-nulled T2", "brain, nominal field", PhantomKind.Head,
                     [
                         Signal("white-matter", "white matter", 0.69, 850, 72), Signal("grey-matter", "grey matter", 0.80, 1480, 88),
-                        Signal("deep-grey-matter", "deep grey matter", 0.79, 1360, 66), Signal("csf", "ventricles and sulci", 1, 4350, 2000),
-                        Signal("subcutaneous-fat", "scalp fat", 0.9, 375, 90), Signal("ms-lesion", "lesions", 0.85, 1400, 140),
+                        Signal("deep-grey", "deep grey matter", 0.79, 1360, 66), Signal("csf", "ventricles and sulci", 1, 4350, 2000),
+                        Signal("fat", "scalp fat", 0.9, 375, 90), Signal("lesion", "lesions", 0.85, 1400, 140),
                         Signal("muscle", "muscle", 0.79, 1250, 34),
                     ],
                     0.03, 0.03, 0.15, 1.2, 1.2, true),

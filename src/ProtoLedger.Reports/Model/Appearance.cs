@@ -5,7 +5,7 @@ namespace ProtoLedger.Reports.Model;
 /// <param name="SeriesTitle">Series.</param>
 /// <param name="Condition">Title of the B0/B1 condition.</param>
 /// <param name="Phantom">Which digital phantom.</param>
-/// <param name="Tissues">Predicted signed signal of the phantom's tissues; tissues of the phantom that are missing here stay black.</param>
+/// <param name="Tissues">Predicted signed signal of the phantom's tissues; for tissues of the phantom that are missing here the nearest is drawn and named, or black.</param>
 /// <param name="NoiseBefore">Standard deviation of the noise over the brightest tissue's signal before, ≥ 0.</param>
 /// <param name="NoiseAfter">The same scale, after.</param>
 /// <param name="B1Shading">Depth of the transmit-field shading: B1+ scale falls from 1 + depth at the centre to 1 − depth at the edge; in [0, 0.5].</param>

@@ -31,8 +31,11 @@ internal sealed class AbdomenAnatomy : Anatomy
     private static readonly (double X, double Y)[] StomachOutline = Shapes.Smooth(
         (0.20, 0.22), (0.32, 0.40), (0.50, 0.38), (0.60, 0.24), (0.54, 0.08), (0.42, 0.02), (0.32, 0.10), (0.24, 0.14));
 
-    public override IReadOnlyList<string> Tissues { get; } =
-        ["liver", "spleen", "kidney-cortex", "kidney-medulla", "csf", "subcutaneous-fat", "muscle", "arterial-blood", "vertebral-marrow", "liver-lesion"];
+    public override IReadOnlyList<PhantomTissue> Tissues { get; } =
+    [
+        new("liver"), new("spleen"), new("kidney-cortex", "spleen"), new("kidney-medulla", "kidney-cortex", "spleen"), new("csf", "synovial-fluid"),
+        new("fat"), new("muscle"), new("blood-arterial"), new("marrow-vertebral", "marrow-yellow", "muscle"), new("lesion", "spleen"),
+    ];
 
     public override int TissueAt(double x, double y)
     {

@@ -58,12 +58,16 @@ public static class AppearancePictures
         return signed;
     }
 
+    /// <summary>The signal drawn for a tissue of the phantom: its own, or that of the nearest substitute.</summary>
+    private static TissueSignal? Drawn(PhantomTissue tissue, Appearance appearance) =>
+        tissue.Candidates.Select(name => appearance.Tissues.FirstOrDefault(s => s.Tissue == name)).FirstOrDefault(s => s is not null);
+
     private static double[] Mix(Phantom phantom, Appearance appearance, double scale, bool after)
     {
         var image = new double[Size * Size];
         for (var t = 0; t < phantom.Tissues.Count; t++)
         {
-            if (appearance.Tissues.FirstOrDefault(s => s.Tissue == phantom.Tissues[t]) is not { } tissue)
+            if (Drawn(phantom.Tissues[t], appearance) is not { } tissue)
                 continue;
             var (nominal, off) = after ? (tissue.After, tissue.AfterOffResonance) : (tissue.Before, tissue.BeforeOffResonance);
             var fractions = phantom.Fractions[t];
@@ -144,17 +148,20 @@ public static class AppearancePictures
     {
         var scale = SignalChart.Scale(appearance);
         var tissues = appearance.Tissues
-            .Where(t => phantom.Tissues.Contains(t.Tissue))
+            .Where(t => phantom.Tissues.Any(p => Drawn(p, appearance) == t))
             .Select(t => (t.Words, Before: Shade(t.Before / scale / white), After: Shade(t.After / scale / white)))
             .ToList();
         var changed = tissues.Where(t => t.Before != t.After).Select(t => $"{t.Words} from {t.Before} to {t.After}").ToList();
         var kept = tissues.Where(t => t.Before == t.After).Select(t => $"{t.Words} ({t.Before})").ToList();
+        var replaced = phantom.Tissues.Select(p => (p.Name, For: Drawn(p, appearance))).Where(p => p.For is { } s && s.Tissue != p.Name)
+            .Select(p => $"{p.Name.Replace('-', ' ')} as {p.For!.Words}").ToList();
         var off = appearance.Tissues.Any(t => Differs(t.Before, t.BeforeOffResonance, scale) || Differs(t.After, t.AfterOffResonance, scale))
             ? " One region is drawn off resonance, at the worst of the condition."
             : "";
         return "One window for both pictures. "
             + (changed.Count > 0 ? $"Shades that change: {string.Join("; ", changed)}. " : "No tissue changes its shade. ")
             + (kept.Count > 0 ? $"Shades that stay: {string.Join(", ", kept)}. " : "")
+            + (replaced.Count > 0 ? $"Drawn for want of own values: {string.Join(", ", replaced)}. " : "")
             + $"Noise: {Relative(appearance.NoiseBefore, appearance.NoiseAfter)}.{Blurred(appearance)}{off} "
             + "In the difference, middle grey means no change, white brighter after, black darker.";
     }

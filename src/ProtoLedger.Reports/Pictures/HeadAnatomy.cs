@@ -25,8 +25,10 @@ internal sealed class HeadAnatomy : Anatomy
     private const double Ribbon = 0.043;
     private static readonly Sulcus[] Sulci = MakeSulci();
 
-    public override IReadOnlyList<string> Tissues { get; } =
-        ["white-matter", "grey-matter", "deep-grey-matter", "csf", "subcutaneous-fat", "ms-lesion", "muscle"];
+    public override IReadOnlyList<PhantomTissue> Tissues { get; } =
+    [
+        new("white-matter"), new("grey-matter"), new("deep-grey", "grey-matter"), new("csf"), new("fat"), new("lesion"), new("muscle", "grey-matter"),
+    ];
 
     public override int TissueAt(double x, double y)
     {

@@ -34,8 +34,10 @@ internal sealed class KneeAnatomy : Anatomy
     private static readonly (double X, double Y)[] Quadriceps = Shapes.Smooth((-0.44, 1.2), (-0.45, 0.90), (-0.44, 0.66), (-0.33, 0.62), (-0.25, 0.80), (-0.25, 1.2));
     private static readonly (double X, double Y)[] Popliteus = Shapes.Smooth((0.36, 0.08), (0.43, 0.20), (0.46, 0.02), (0.46, -0.22), (0.40, -0.26), (0.37, -0.10));
 
-    public override IReadOnlyList<string> Tissues { get; } =
-        ["yellow-marrow", "cartilage", "synovial-fluid", "subcutaneous-fat", "muscle", "arterial-blood"];
+    public override IReadOnlyList<PhantomTissue> Tissues { get; } =
+    [
+        new("marrow-yellow", "fat"), new("cartilage"), new("synovial-fluid", "csf"), new("fat", "marrow-yellow"), new("muscle"), new("blood-arterial"),
+    ];
 
     public override int TissueAt(double x, double y)
     {

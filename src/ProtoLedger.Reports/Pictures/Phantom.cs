@@ -14,11 +14,11 @@ public sealed class Phantom
 
     private static readonly ConcurrentDictionary<PhantomKind, Phantom> Drawn = new();
 
-    private Phantom(IReadOnlyList<string> tissues, float[][] fractions, float[] offResonance, float[] texture) =>
+    private Phantom(IReadOnlyList<PhantomTissue> tissues, float[][] fractions, float[] offResonance, float[] texture) =>
         (Tissues, Fractions, OffResonance, Texture) = (tissues, fractions, offResonance, texture);
 
-    /// <summary>Catalogue names of the tissues.</summary>
-    public IReadOnlyList<string> Tissues { get; }
+    /// <summary>What it is made of.</summary>
+    public IReadOnlyList<PhantomTissue> Tissues { get; }
 
     /// <summary>For each tissue Size × Size fractions in [0, 1], row by row from the top; what is missing to 1 gives no signal.</summary>
     internal float[][] Fractions { get; }
@@ -93,8 +93,8 @@ internal abstract class Anatomy
     /// <summary>No signal: air, cortical bone, ligament.</summary>
     public const int Nothing = -1;
 
-    /// <summary>Catalogue names.</summary>
-    public abstract IReadOnlyList<string> Tissues { get; }
+    /// <summary>What it is made of.</summary>
+    public abstract IReadOnlyList<PhantomTissue> Tissues { get; }
 
     /// <summary>Index of the tissue at a point, or <see cref="Nothing"/>.</summary>
     public abstract int TissueAt(double x, double y);

@@ -66,6 +66,14 @@ public sealed class PictureTests
     }
 
     [Fact]
+    public void Draw_TissueWithoutValues_IsDrawnAsItsNearestAndNamed()
+    {
+        var set = AppearancePictures.Draw("a", Head with { Tissues = [.. Head.Tissues.Where(t => t.Tissue is not "deep-grey" and not "muscle")] }, "s");
+        Assert.Contains("Drawn for want of own values: deep grey as grey matter, muscle as grey matter.", set.Text, StringComparison.Ordinal);
+        Assert.True(Mean(Decode(set.Before, 256, 256), 141, 139, 2) > 60);
+    }
+
+    [Fact]
     public void Draw_Noise_HasTheRayleighMeanInAir()
     {
         // Mean of the magnitude of complex normal noise is σ √(π/2): Gudbjartsson and Patz, Magn Reson Med 1995;34:910.
@@ -89,7 +97,7 @@ public sealed class PictureTests
         // Scalp on the left edge is a step along a row, on top a step along a column.
         Assert.True(Steepest(along, row: true) < 0.7 * Steepest(across, row: true));
         Assert.True(Steepest(across, row: false) < 0.7 * Steepest(along, row: false));
-        static TissueSignal Steady() => new("subcutaneous-fat", "fat", 1, 1, 1, 1, 0);
+        static TissueSignal Steady() => new("fat", "fat", 1, 1, 1, 1, 0);
         static int Steepest(byte[] p, bool row) => Enumerable.Range(1, 100).Max(i => row ? Math.Abs(p[(128 * 256) + i] - p[(128 * 256) + i - 1]) : Math.Abs(p[(i * 256) + 128] - p[((i - 1) * 256) + 128]));
     }
 

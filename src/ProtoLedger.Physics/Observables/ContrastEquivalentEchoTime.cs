@@ -1,3 +1,5 @@
+using ProtoLedger.Physics.Kernels;
+
 namespace ProtoLedger.Physics.Observables;
 
 /// <summary>Echo time of a plain spin echo that would show the same T2 contrast as an echo of a train with reduced refocusing angles.</summary>
@@ -11,5 +13,5 @@ public static class ContrastEquivalentEchoTime
     /// Source: Busse, Hariharan, Vu, Brittain, MRM 2006;55:1030 (from memory). With 180° refocusing it is the echo time exactly;
     /// below, magnetisation rests along z for part of the train and the equivalent time is shorter. Depends on T1/T2, weakly.
     /// </remarks>
-    public static double Of(double signal, double signalWithoutRelaxation, double t2) => -t2 * Math.Log(Math.Abs(signal / signalWithoutRelaxation));
+    public static double Of(double signal, double signalWithoutRelaxation, double t2) => -t2 * Elementary.Log(Math.Abs(signal / signalWithoutRelaxation));
 }

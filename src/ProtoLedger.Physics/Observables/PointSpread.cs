@@ -1,3 +1,5 @@
+using ProtoLedger.Physics.Kernels;
+
 namespace ProtoLedger.Physics.Observables;
 
 /// <summary>Width of the point-spread function along the phase-encoding direction of an echo train.</summary>
@@ -21,7 +23,7 @@ public static class PointSpread
         while (Magnitude(weights, outside) > half && outside < weights.Length / 2.0)
             outside += Step;
         var inside = outside - Step;
-        for (var i = 0; i < 50; i++)
+        for (var i = 0; i < 36; i++)
         {
             var middle = (inside + outside) / 2;
             if (Magnitude(weights, middle) > half)
@@ -44,7 +46,7 @@ public static class PointSpread
         for (var k = 0; k < lines; k++)
         {
             var part = centreOut ? Math.Abs(k - lines / 2) / (lines / 2.0) : k / (double)lines;
-            weights[k] = Math.Exp(-part * trainDuration / t2);
+            weights[k] = Elementary.Exp(-part * trainDuration / t2);
         }
 
         return weights;
@@ -78,12 +80,15 @@ public static class PointSpread
 
     private static double Magnitude(ReadOnlySpan<double> weights, double x)
     {
-        double real = 0, imaginary = 0;
-        for (var k = 0; k < weights.Length; k++)
+        // The phase factor turns by the same angle from line to line.
+        var angle = 2 * Math.PI * x / weights.Length;
+        var (cosine, sine) = (Elementary.Cos(angle), Elementary.Sin(angle));
+        double real = 0, imaginary = 0, phaseReal = 1, phaseImaginary = 0;
+        foreach (var weight in weights)
         {
-            var angle = 2 * Math.PI * k * x / weights.Length;
-            real += weights[k] * Math.Cos(angle);
-            imaginary += weights[k] * Math.Sin(angle);
+            real += weight * phaseReal;
+            imaginary += weight * phaseImaginary;
+            (phaseReal, phaseImaginary) = (phaseReal * cosine - phaseImaginary * sine, phaseReal * sine + phaseImaginary * cosine);
         }
 
         return Math.Sqrt(real * real + imaginary * imaginary);

@@ -7,7 +7,7 @@ namespace ProtoLedger.Physics.Prediction;
 /// <summary>Fills the columns of the pulses that enter a program as maps: multiplier and recovery, lane by lane.</summary>
 internal static class MapColumns
 {
-    internal static void Fill(CompiledSeries program, PredictionSetting setting, PeakLanes peaks, Span<double> columns)
+    internal static void Fill(CompiledSeries program, Readout readout, PredictionSetting setting, PeakLanes peaks, Span<double> columns)
     {
         var count = peaks.Lanes.Count;
         for (var i = 0; i < program.Maps.Count; i++)
@@ -18,7 +18,7 @@ internal static class MapColumns
             switch (program.Maps[i].Preparation)
             {
                 case Inversion inversion:
-                    Invert(inversion, setting, peaks, multiplier);
+                    Invert(inversion, readout, setting, peaks, multiplier);
                     break;
                 case SpectralSaturation saturation:
                     Spectral(saturation.Pulse, saturation.CarrierDetuneHz, setting, peaks, multiplier, recovery);
@@ -30,7 +30,7 @@ internal static class MapColumns
         }
     }
 
-    private static void Invert(Inversion inversion, PredictionSetting setting, PeakLanes peaks, Span<double> multiplier)
+    private static void Invert(Inversion inversion, Readout readout, PredictionSetting setting, PeakLanes peaks, Span<double> multiplier)
     {
         var lanes = peaks.Lanes;
         if (inversion.Pulse is EfficiencyInversion efficiency)
@@ -46,7 +46,7 @@ internal static class MapColumns
         }
 
         var frequencies = Frequencies(setting, peaks);
-        if (InversionSlab.Of(inversion) is { } slab)
+        if (InversionSlab.Of(inversion, readout) is { } slab)
             slab.MeanMultiplier(lanes.B1Scale, frequencies, multiplier);
         else
             PulseResponse.Longitudinal(inversion.Pulse, lanes.B1Scale, frequencies, multiplier);

@@ -50,7 +50,7 @@ internal sealed unsafe class PredictionRun
         var lanes = _peaks.Lanes;
         var t2 = _program.DecaysWithT2Star && _program.Closure != Closure.RfSpoiled ? lanes.T2Star : lanes.T2;
         var columns = new double[2 * _program.Maps.Count * lanes.Count];
-        MapColumns.Fill(_program, _setting, _peaks, columns);
+        MapColumns.Fill(_program, _series.Readout, _setting, _peaks, columns);
         fixed (double* t1 = lanes.T1, transverse = t2, b1 = lanes.B1Scale, maps = columns)
         fixed (double* signed = Signed, before = Before, end = End, period = Period, samples = Samples)
         {

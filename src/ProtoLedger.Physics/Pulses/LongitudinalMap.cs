@@ -1,3 +1,5 @@
+using ProtoLedger.Physics.Kernels;
+
 namespace ProtoLedger.Physics.Pulses;
 
 /// <summary>What a stretch of a sequence does to longitudinal magnetisation: M → Multiplier · M + Recovery, over M0 = 1.</summary>
@@ -8,7 +10,7 @@ public readonly record struct LongitudinalMap(double Multiplier, double Recovery
     /// <summary>Free recovery for a time: e = exp(−t/T1), M → e M + 1 − e.</summary>
     public static LongitudinalMap Wait(double timeMs, double t1)
     {
-        var kept = Math.Exp(-timeMs / t1);
+        var kept = Elementary.Exp(-timeMs / t1);
         return new LongitudinalMap(kept, 1 - kept);
     }
 

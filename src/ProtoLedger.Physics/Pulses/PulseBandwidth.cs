@@ -1,4 +1,5 @@
 using ProtoLedger.Physics.Acquisition;
+using ProtoLedger.Physics.Kernels;
 
 namespace ProtoLedger.Physics.Pulses;
 
@@ -17,7 +18,7 @@ public static class PulseBandwidth
     {
         WindowedSincPulse p => p.TimeBandwidth / (p.Duration * 1e-3),
         HyperbolicSecantPulse p => p.Mu * p.Beta / Math.PI,
-        GaussianPulse p => Math.Sqrt(2 * Math.Log(2)) / (Math.PI * p.SigmaFraction * p.Duration * 1e-3),
+        GaussianPulse p => Math.Sqrt(2 * Elementary.Log(2)) / (Math.PI * p.SigmaFraction * p.Duration * 1e-3),
         HardPulse { Duration: > 0 } p => 1.2067091288032283 / (p.Duration * 1e-3), // root of sin(πx/2)/(πx/2) = ½
         SampledPulse p => SpectrumWidth(p),
         _ => throw new ArgumentException($"Pulse '{pulse.Name}' has no bandwidth: only a shaped pulse of finite length selects a slice.", nameof(pulse)),
@@ -43,8 +44,8 @@ public static class PulseBandwidth
         for (var k = 0; k < pulse.AmplitudeHz.Count; k++)
         {
             var phase = pulse.PhaseDegrees[k] * (Math.PI / 180) - 2 * Math.PI * frequencyHz * (k + 0.5) * step;
-            real += pulse.AmplitudeHz[k] * Math.Cos(phase);
-            imaginary += pulse.AmplitudeHz[k] * Math.Sin(phase);
+            real += pulse.AmplitudeHz[k] * Elementary.Cos(phase);
+            imaginary += pulse.AmplitudeHz[k] * Elementary.Sin(phase);
         }
 
         return Math.Sqrt(real * real + imaginary * imaginary);

@@ -1,4 +1,5 @@
 using ProtoLedger.Physics.Acquisition;
+using ProtoLedger.Physics.Kernels;
 
 namespace ProtoLedger.Physics.Pulses;
 
@@ -89,7 +90,7 @@ public static class PulseResponse
             for (var i = 0; i < b1Scale.Length; i++)
             {
                 var half = b1Scale[i] * instant.FlipAngle * (Math.PI / 360);
-                (result.AReal[i], result.AImaginary[i], result.BReal[i], result.BImaginary[i]) = (Math.Cos(half), 0, 0, -Math.Sin(half));
+                (result.AReal[i], result.AImaginary[i], result.BReal[i], result.BImaginary[i]) = (Elementary.Cos(half), 0, 0, -Elementary.Sin(half));
             }
 
             return;

@@ -1,5 +1,6 @@
 using System.Runtime.CompilerServices;
 using ProtoLedger.Physics.Acquisition;
+using ProtoLedger.Physics.Kernels;
 
 namespace ProtoLedger.Physics.Pulses;
 
@@ -55,8 +56,8 @@ internal sealed class PulseSteps
     private static PulseSteps Make(RfPulse pulse) => pulse switch
     {
         HardPulse p => ByArea(p.Duration, p.FlipAngle, static _ => 1, 16),
-        WindowedSincPulse p => ByArea(p.Duration, p.FlipAngle, x => (0.54 + 0.46 * Math.Cos(2 * Math.PI * x)) * Sinc(p.TimeBandwidth * x), FewestSteps),
-        GaussianPulse p => ByArea(p.Duration, p.FlipAngle, x => Math.Exp(-x * x / (2 * p.SigmaFraction * p.SigmaFraction)), FewestSteps),
+        WindowedSincPulse p => ByArea(p.Duration, p.FlipAngle, x => (0.54 + 0.46 * Elementary.Cos(2 * Math.PI * x)) * Sinc(p.TimeBandwidth * x), FewestSteps),
+        GaussianPulse p => ByArea(p.Duration, p.FlipAngle, x => Elementary.Exp(-x * x / (2 * p.SigmaFraction * p.SigmaFraction)), FewestSteps),
         HyperbolicSecantPulse p => Secant(p),
         SampledPulse p => Samples(p),
         _ => throw new ArgumentException($"Pulse '{pulse.Name}' of kind {pulse.GetType().Name} has no shape to integrate.", nameof(pulse)),
@@ -120,8 +121,8 @@ internal sealed class PulseSteps
         for (var k = 0; k < steps.X.Length; k++)
         {
             var (amplitude, phase) = (p.AmplitudeHz[k / each], p.PhaseDegrees[k / each] * (Math.PI / 180));
-            steps.X[k] = turn * amplitude * Math.Cos(phase);
-            steps.Y[k] = turn * amplitude * Math.Sin(phase);
+            steps.X[k] = turn * amplitude * Elementary.Cos(phase);
+            steps.Y[k] = turn * amplitude * Elementary.Sin(phase);
             steps.Energy += amplitude * amplitude * (steps.StepMs * 1e-3);
         }
 
@@ -139,17 +140,17 @@ internal sealed class PulseSteps
             yield return (k, (k + 0.5 - offset) / count - 0.5, (k + 0.5 + offset) / count - 0.5);
     }
 
-    private static double Sinc(double x) => Math.Abs(x) < 1e-8 ? 1 : Math.Sin(Math.PI * x) / (Math.PI * x);
+    private static double Sinc(double x) => Math.Abs(x) < 1e-8 ? 1 : Elementary.Sin(Math.PI * x) / (Math.PI * x);
 
     private static double Sech(double x)
     {
-        var e = Math.Exp(-Math.Abs(x));
+        var e = Elementary.Exp(-Math.Abs(x));
         return 2 * e / (1 + e * e);
     }
 
     private static double Tanh(double x)
     {
-        var e = Math.Exp(-2 * Math.Abs(x));
+        var e = Elementary.Exp(-2 * Math.Abs(x));
         return Math.CopySign((1 - e) / (1 + e), x);
     }
 }

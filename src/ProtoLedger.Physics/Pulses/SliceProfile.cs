@@ -1,4 +1,5 @@
 using System.Numerics;
+using ProtoLedger.Physics.Kernels;
 
 namespace ProtoLedger.Physics.Pulses;
 
@@ -63,7 +64,7 @@ public static class SliceProfile
         for (var i = 0; i < z.Length; i++)
         {
             var m = SteadyLongitudinal(echo, 1 - 2 * excitation.B(i), 1 - 2 * refocusing.B(i), t1);
-            var excited = excitation.Excited(i) * Complex.FromPolarCoordinates(1, rephasing * z[i]);
+            var excited = excitation.Excited(i) * new Complex(Elementary.Cos(rephasing * z[i]), Elementary.Sin(rephasing * z[i]));
             var refocused = refocusing.Refocused(i) * Complex.Conjugate(excited) * m;
             var weight = Simpson(i, z.Length) * (2 * echo.Reach / echo.Intervals);
             real += weight * refocused.Real;
@@ -71,7 +72,7 @@ public static class SliceProfile
             magnitude += weight * refocused.Magnitude;
         }
 
-        var decay = Math.Exp(-echo.EchoTime / t2);
+        var decay = Elementary.Exp(-echo.EchoTime / t2);
         return new SelectiveEchoSignal(Math.Sqrt(real * real + imaginary * imaginary) * decay, magnitude * decay);
     }
 
@@ -80,8 +81,8 @@ public static class SliceProfile
     {
         if (echo.RepetitionTime is not { } repetitionTime)
             return 1;
-        var before = Math.Exp(-echo.EchoTime / 2 / t1);
-        var after = Math.Exp(-(repetitionTime - echo.EchoTime / 2) / t1);
+        var before = Elementary.Exp(-echo.EchoTime / 2 / t1);
+        var after = Elementary.Exp(-(repetitionTime - echo.EchoTime / 2) / t1);
         return ((1 - before) * refocused * after + 1 - after) / (1 - excited * before * refocused * after);
     }
 

@@ -1,3 +1,5 @@
+using ProtoLedger.Physics.Kernels;
+
 namespace ProtoLedger.Physics.Pulses;
 
 /// <summary>Steady state under a spectral pulse that recurs once per slice while each slice is excited once per repetition.</summary>
@@ -35,7 +37,7 @@ public sealed record SpectralSteadyState(
             .Then(pulse)
             .FixedPoint;
         var beforeExcitation = toExcitation.Apply(afterPulse);
-        var excited = SinDegrees(ExcitationFlipAngle) * Math.Exp(-EchoTime / t2);
+        var excited = SinDegrees(ExcitationFlipAngle) * Elementary.Exp(-EchoTime / t2);
         if (RefocusingFlipAngle is { } angle)
             excited *= (1 - CosDegrees(angle)) / 2;
         return new SpectralSignal(afterPulse, beforeExcitation, beforeExcitation * excited);
@@ -50,9 +52,9 @@ public sealed record SpectralSteadyState(
         return excitation.Then(half).Then(new LongitudinalMap(CosDegrees(angle), 0)).Then(half);
     }
 
-    private static double SinDegrees(double angle) => Math.Sin(angle * (Math.PI / 180));
+    private static double SinDegrees(double angle) => Elementary.Sin(angle * (Math.PI / 180));
 
-    private static double CosDegrees(double angle) => Math.Cos(angle * (Math.PI / 180));
+    private static double CosDegrees(double angle) => Elementary.Cos(angle * (Math.PI / 180));
 }
 
 /// <summary>Steady state of one spin species under a spectral pulse, over M0 = 1.</summary>

@@ -9,7 +9,8 @@ internal sealed class BundleFiles(IReadOnlyList<(string Name, ReadOnlyMemory<byt
 
     public ReadOnlyMemory<byte> this[string name] => byName[name];
 
-    public ReadOnlyMemory<byte>? Find(string name) => byName.TryGetValue(name, out var content) ? content : null;
+    /// <summary>The entry's bytes; null where it is missing. (A bare null would turn into empty memory here.)</summary>
+    public ReadOnlyMemory<byte>? Find(string name) => byName.TryGetValue(name, out var content) ? content : default(ReadOnlyMemory<byte>?);
 
     public ReadOnlyMemory<byte> Require(string name, BundlePart part) =>
         Find(name) ?? throw new BundleFaultException(new BundleFault(part, name, "the entry is missing"));

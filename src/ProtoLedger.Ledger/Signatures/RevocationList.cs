@@ -17,9 +17,11 @@ public sealed class RevocationList
             var signed = list.PeekEncodedValue().ToArray();
             var (entries, issuer, thisUpdate) = Fields(list.ReadSequence());
             Algorithm(list.ReadSequence());
-            var signatureBits = list.ReadBitString(out _);
+            var signatureBits = list.ReadBitString(out var unused);
             list.ThrowIfNotEmpty();
-            return (signed, signatureBits, entries, issuer, thisUpdate);
+            return unused == 0
+                ? (signed, signatureBits, entries, issuer, thisUpdate)
+                : throw new AsnContentException("Odd bits.");
         });
     }
 

@@ -31,7 +31,7 @@ public sealed class LedgerLeafTests
     public void ToBytes_AnyTexts_EqualTheOtherCanonicaliser()
     {
         // Names with controls, quotes, surrogate pairs and characters that sort differently in UTF-8 and UTF-16.
-        var text = Gen.Char["\0\u0001\u001f\b\t\n\f\r\"\\/ aZ~\u007f\u0080é€\u2028\ufb33\uffff"].Array[1, 12].Select(c => new string(c));
+        var text = Gen.Char["\u0001\u001f\b\t\n\f\r\"\\/ aZ~\u007f\u0080é€\u2028\ufb33\uffff"].Array[1, 12].Select(c => new string(c));
         var any = Gen.OneOf(text, Gen.Const("\U0001F600"), Gen.Const("\ue000"), Gen.Const("x\U00010000y"));
         Gen.Select(any, any, Gen.Dictionary(any, Gen.Byte.Array[32])[0, 5]).Sample((actor, subject, blobs) =>
         {

@@ -27,10 +27,12 @@ internal readonly record struct Body<T>(T Value)
 
     private static async Task<JsonNode?> ReadAsync(HttpRequest request)
     {
-        if (!MediaTypeHeaderValue.TryParse(request.ContentType, out var type) || !(type.MediaType == "application/json" || type.Suffix == "json"))
-            throw new ProblemException(Problems.ForStatus(StatusCodes.Status415UnsupportedMediaType, request.Path));
         using var bytes = new MemoryStream();
         await request.Body.CopyToAsync(bytes, request.HttpContext.RequestAborted);
+        if (bytes.Length == 0)
+            return new JsonObject(); // no body says as much as an empty one
+        if (!MediaTypeHeaderValue.TryParse(request.ContentType, out var type) || !(type.MediaType == "application/json" || type.Suffix == "json"))
+            throw new ProblemException(Problems.ForStatus(StatusCodes.Status415UnsupportedMediaType, request.Path));
         if (bytes.Length > CanonicalJson.MaximumBytes)
             throw new ProblemException(Problems.ForStatus(StatusCodes.Status413PayloadTooLarge, request.Path));
         try

@@ -92,7 +92,7 @@ internal static class JsonShape
             TypeCode.Double => (kind == JsonValueKind.Number, "a number"),
             TypeCode.Boolean => (kind is JsonValueKind.True or JsonValueKind.False, "true or false"),
             TypeCode.String => (kind == JsonValueKind.String, "a text"),
-            _ when type == typeof(DateTimeOffset) => (kind == JsonValueKind.String && IsTime(node.GetValue<string>()), "a time such as 2030-01-31T08:00:00Z (RFC 3339, with offset)"),
+            _ when type == typeof(DateTimeOffset) => (kind == JsonValueKind.String && Times.TryParse(node.GetValue<string>(), out DateTime _), "a time such as 2030-01-31T08:00:00Z (RFC 3339, with offset)"),
             _ => throw new NotSupportedException(type.Name),
         };
         if (!fits)
@@ -119,10 +119,6 @@ internal static class JsonShape
     }
 
     private static bool IsWhole(JsonNode node) => node.GetValue<double>() is var number && Math.Floor(number) == number && Math.Abs(number) <= 9007199254740991;
-
-    private static bool IsTime(string text) =>
-        text.Length >= 20 && (text[^1] is 'Z' || text[^6] is '+' or '-')
-        && DateTimeOffset.TryParse(text, CultureInfo.InvariantCulture, DateTimeStyles.AssumeUniversal, out _);
 
     private static string Word(JsonValueKind kind) => kind switch
     {

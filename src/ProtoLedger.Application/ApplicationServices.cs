@@ -1,10 +1,12 @@
 using Microsoft.Extensions.DependencyInjection;
 using ProtoLedger.Application.Accounts;
+using ProtoLedger.Application.Actors;
 using ProtoLedger.Application.ChangeRequests;
 using ProtoLedger.Application.Commanding;
 using ProtoLedger.Application.Documents;
 using ProtoLedger.Application.History;
 using ProtoLedger.Application.Importing;
+using ProtoLedger.Application.Predictions;
 using ProtoLedger.Application.Reporting;
 using ProtoLedger.Application.Runs;
 using ProtoLedger.Application.Site;
@@ -33,7 +35,7 @@ public static class ApplicationServices
         typeof(CreateChangeRequest), typeof(EditChangeRequest), typeof(SubmitChangeRequest), typeof(WithdrawChangeRequest),
         typeof(DeclineChangeRequest), typeof(ApproveChangeRequest), typeof(RebaseChangeRequest), typeof(MakeEffective),
         typeof(ReadChangeRequests), typeof(AddComment), typeof(ReadDocuments), typeof(ReadRuns), typeof(EnqueueRun), typeof(ReadLedger), typeof(ReadAudit), typeof(PrepareSite),
-        typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
+        typeof(PredictSeries), typeof(RecordDenial), typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
         typeof(ImportStore), typeof(PrepareDemo), typeof(RunWorker), typeof(ChangeReports), typeof(CompareRuns),
     ];
 }

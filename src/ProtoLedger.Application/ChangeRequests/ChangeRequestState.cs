@@ -24,6 +24,9 @@ public static class ChangeRequestStates
 {
     private static readonly string[] Words = ["draft", "under review", "approved", "declined", "withdrawn"];
 
+    /// <summary>All words, in the order of the states.</summary>
+    public static IReadOnlyList<string> All => Words;
+
     /// <summary>The word that API, pages and tables use.</summary>
     /// <param name="state">State.</param>
     public static string ToWord(this ChangeRequestState state) => Words[(int)state];

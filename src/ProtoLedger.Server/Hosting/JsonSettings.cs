@@ -1,5 +1,6 @@
 using System.Text.Json;
 using System.Text.Json.Serialization;
+using ProtoLedger.Application.ChangeRequests;
 
 namespace ProtoLedger.Server.Hosting;
 
@@ -17,6 +18,7 @@ internal static class JsonSettings
         options.RespectRequiredConstructorParameters = true;
         options.DefaultIgnoreCondition = JsonIgnoreCondition.WhenWritingNull;
         options.MaxDepth = 64;
+        options.Converters.Add(new StateWord());
         options.Converters.Add(new JsonStringEnumConverter(JsonNamingPolicy.CamelCase, allowIntegerValues: false));
         options.Converters.Add(new UtcTime());
     }
@@ -29,5 +31,14 @@ internal static class JsonSettings
 
         public override void Write(Utf8JsonWriter writer, DateTime value, JsonSerializerOptions options) =>
             writer.WriteStringValue(DateTime.SpecifyKind(value, DateTimeKind.Utc).ToString("yyyy-MM-ddTHH:mm:ss.FFFFFFK", System.Globalization.CultureInfo.InvariantCulture));
+    }
+
+    /// <summary>States of a change request stand as people say them.</summary>
+    private sealed class StateWord : JsonConverter<ChangeRequestState>
+    {
+        public override ChangeRequestState Read(ref Utf8JsonReader reader, Type typeToConvert, JsonSerializerOptions options) =>
+            ChangeRequestStates.FromWord(reader.GetString() ?? "");
+
+        public override void Write(Utf8JsonWriter writer, ChangeRequestState value, JsonSerializerOptions options) => writer.WriteStringValue(value.ToWord());
     }
 }

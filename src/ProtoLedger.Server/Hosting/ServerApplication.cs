@@ -1,10 +1,19 @@
+using Microsoft.Extensions.DependencyInjection.Extensions;
 using Microsoft.Extensions.FileProviders;
 using Microsoft.Extensions.Options;
-using ProtoLedger.Application.Predictions;
+using ProtoLedger.Application;
+using ProtoLedger.Application.Site;
 using ProtoLedger.Protocols.Canonical;
+using ProtoLedger.Server.Features.Accounts;
+using ProtoLedger.Server.Features.Audit;
+using ProtoLedger.Server.Features.ChangeRequests;
 using ProtoLedger.Server.Features.Documentation;
+using ProtoLedger.Server.Features.Documents;
 using ProtoLedger.Server.Features.Health;
+using ProtoLedger.Server.Features.Ledger;
 using ProtoLedger.Server.Features.Predictions;
+using ProtoLedger.Server.Features.Runs;
+using ProtoLedger.Server.Features.Sessions;
 using ProtoLedger.Server.Http;
 using ProtoLedger.Storage.Sessions;
 
@@ -53,13 +62,12 @@ internal static class ServerApplication
     {
         var services = builder.Services;
         services.AddSingleton(database);
-        services.AddSingleton(TimeProvider.System);
+        services.TryAddSingleton(TimeProvider.System);
         services.AddSingleton<Readiness>();
         services.AddProtoLedgerStorage(database.ConnectionString);
+        services.AddProtoLedgerApplication(new SiteOptions(options.SiteName, options.Origin, SealingKey.Read(options)));
         services.AddHostedService<ClusterGuard>();
-        services.AddSingleton<PredictSeries>();
         services.AddScoped<CurrentCaller>();
-        services.AddSingleton<IIdentification, NobodyIsKnown>();
         services.AddScoped(provider => provider.GetRequiredService<CurrentCaller>().Caller);
         services.ConfigureHttpJsonOptions(json => JsonSettings.Apply(json.SerializerOptions));
         services.AddExceptionHandler<ProblemExceptionHandler>();
@@ -76,7 +84,15 @@ internal static class ServerApplication
         app.MapHealth();
         if (options.ServesWeb)
         {
+            app.MapSessions();
             app.MapPredictions();
+            app.MapChangeRequests();
+            app.MapReports();
+            app.MapDocuments();
+            app.MapRuns();
+            app.MapLedger();
+            app.MapAudit();
+            app.MapAccounts();
             app.MapApiDescription();
             app.MapProblemPages();
         }

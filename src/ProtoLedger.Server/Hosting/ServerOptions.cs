@@ -30,6 +30,19 @@ internal sealed class ServerOptions
     [MinLength(8)]
     public string? DemoSigningPassphrase { get; set; }
 
+    /// <summary>Name of the site, as its certificates show it.</summary>
+    [Required]
+    [StringLength(60, MinimumLength = 1)]
+    public string SiteName { get; set; } = "ProtoLedger site";
+
+    /// <summary>Origin line of the checkpoints; no white space, no plus sign.</summary>
+    [Required]
+    [RegularExpression(@"[^\s+]{1,100}")]
+    public string Origin { get; set; } = "protoledger.invalid/ledger";
+
+    /// <summary>File of the key under which the site's own private keys are sealed; null for sealing.key in the data folder.</summary>
+    public string? SealingKeyFile { get; set; }
+
     /// <summary>Workers in this process.</summary>
     [Range(1, 64)]
     public int Workers { get; set; } = Math.Max(1, Environment.ProcessorCount - 1);

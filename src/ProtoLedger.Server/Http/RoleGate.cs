@@ -1,5 +1,6 @@
 using System.Net.Http.Headers;
 using Microsoft.Net.Http.Headers;
+using ProtoLedger.Application.Accounts;
 using ProtoLedger.Application.Actors;
 
 namespace ProtoLedger.Server.Http;
@@ -9,7 +10,7 @@ internal sealed class RoleGate(RequestDelegate next)
 {
     private const int LongestKey = 200;
 
-    public async Task InvokeAsync(HttpContext context, CurrentCaller current, IIdentification identification)
+    public async Task InvokeAsync(HttpContext context, CurrentCaller current, Authenticate authenticate, RecordDenial denial)
     {
         if (context.GetEndpoint() is not RouteEndpoint endpoint)
         {
@@ -22,12 +23,13 @@ internal sealed class RoleGate(RequestDelegate next)
         var actor = Actor.Anonymous;
         if (BearerToken(context.Request) is { } token)
         {
-            var known = await identification.IdentifyAsync(token, context.RequestAborted);
-            if (known.Succeeded)
-                actor = known.Value;
+            if (await authenticate.RunAsync(token, context.RequestAborted) is { } known)
+            {
+                actor = known;
+            }
             else if (rule is not { AllowsAnonymous: true })
             {
-                await Problems.From(known.Refusal).ExecuteAsync(context);
+                await Problems.NeedsSignIn("The token is unknown, has expired or was ended.").ExecuteAsync(context);
                 return;
             }
         }
@@ -35,7 +37,7 @@ internal sealed class RoleGate(RequestDelegate next)
         current.Caller = new Caller(actor, null, address);
         if (rule?.Allows(actor) != true)
         {
-            await identification.RecordDenialAsync(current.Caller, $"{context.Request.Method} {endpoint.RoutePattern.RawText}", context.RequestAborted);
+            await denial.RunAsync(current.Caller, $"{context.Request.Method} {endpoint.RoutePattern.RawText}", rule?.Name ?? "no rule", context.RequestAborted);
             await Refuse(actor, rule).ExecuteAsync(context);
             return;
         }

@@ -59,7 +59,7 @@ internal static class ChangeRequestEndpoints
     {
         var query = new Query();
         var filter = new ChangeRequestFilter(
-            query.OneOf("state", state, ChangeRequestStates.All, ChangeRequestStates.FromWord),
+            query.OneOf("state", state, ChangeRequestStates.All, word => (ChangeRequestState?)ChangeRequestStates.FromWord(word)),
             document is null ? null : new DocumentKey(query.OneOf("kind", kind, DocumentKinds.Words, DocumentKey.KindOf) ?? DocumentKind.Protocol, document),
             author,
             query.Number("before", before, 1, long.MaxValue),

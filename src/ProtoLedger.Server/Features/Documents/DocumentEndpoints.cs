@@ -75,7 +75,7 @@ internal static class DocumentEndpoints
         HttpContext context, Caller caller, ReadDocuments useCase, DocumentKey key, int? version, string? format, CancellationToken cancellationToken)
     {
         var query = new Query();
-        query.OneOf<bool>("format", format, ["json", "yaml"], word => word == "yaml");
+        query.OneOf("format", format, ["json", "yaml"], word => (bool?)(word == "yaml"));
         query.Demand();
         var found = await useCase.VersionAsync(caller, key, version, cancellationToken);
         if (!found.Succeeded)

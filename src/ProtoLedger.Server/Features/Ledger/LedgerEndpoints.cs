@@ -55,7 +55,7 @@ internal static class LedgerEndpoints
         var query = new Query();
         var (earlier, later) = (query.RequiredNumber("from", from, 1, long.MaxValue), query.Number("to", to, 1, long.MaxValue));
         query.Demand();
-        return (await useCase.ConsistencyAsync(caller, earlier, later, cancellationToken)).ToOk(ConsistencyResponse.From);
+        return (await useCase.ConsistencyAsync(caller, earlier, later, cancellationToken)).ToOk(ConsistencyResponse.Of);
     }
 
     private static async Task<Results<Ok<PageResponse<LeafResponse>>, Problem>> LeavesAsync(
@@ -105,7 +105,7 @@ internal sealed record InclusionResponse(long Index, long Size, string LeafHash,
 /// <param name="Path">Hashes as in RFC 9162, section 2.1.4.</param>
 internal sealed record ConsistencyResponse(long From, long To, IReadOnlyList<string> Path)
 {
-    public static ConsistencyResponse From(ConsistencyProof proof) => new(proof.From, proof.To, [.. proof.Path.Select(h => h.ToBase64())]);
+    public static ConsistencyResponse Of(ConsistencyProof proof) => new(proof.From, proof.To, [.. proof.Path.Select(h => h.ToBase64())]);
 }
 
 /// <summary>A leaf.</summary>

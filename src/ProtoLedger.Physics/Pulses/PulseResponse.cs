@@ -6,7 +6,8 @@ namespace ProtoLedger.Physics.Pulses;
 /// <summary>What a radio-frequency pulse does to magnetisation, over lanes of B1+ scale and off-resonance, from the Bloch equation.</summary>
 /// <remarks>
 /// Off-resonance is spin frequency minus carrier, right-handed: M+ turns by +2πΔf·t. Pulse definitions stand with <see cref="RfPulse"/>.
-/// Source: Bloch, Phys Rev 1946;70:460, integrated as in <see cref="PulseSteps"/>. Equal inputs give equal bits, whatever other lanes stand beside them.
+/// Source: Bloch, Phys Rev 1946;70:460, integrated as in <see cref="PulseSteps"/>. Equal inputs give equal bits in any order of the lanes; with relaxation,
+/// many lanes at one point of the fields share integrations (<see cref="RelaxationSurface"/>) and differ from single lanes by less than 10⁻¹⁰.
 /// </remarks>
 public static class PulseResponse
 {
@@ -72,7 +73,45 @@ public static class PulseResponse
             return;
         }
 
-        RelaxingKernel.Run(PulseSteps.Of(pulse), b1Scale, offResonanceHz, t1, t2, multiplier, recovery);
+        var points = FieldPoints.Distinct(b1Scale, offResonanceHz);
+        var lanesOfPoint = new int[points.Count];
+        foreach (var point in points.PointOf)
+            lanesOfPoint[point]++;
+        var steps = PulseSteps.Of(pulse);
+        var alone = new List<int>();
+        for (var i = 0; i < points.PointOf.Length; i++)
+        {
+            if (lanesOfPoint[points.PointOf[i]] >= RelaxationSurface.FewestLanes && RelaxationSurface.Covers(steps, t1[i], t2[i]))
+                (multiplier[i], recovery[i]) = RelaxationSurface.Of(pulse, b1Scale[i], offResonanceHz[i]).At(t1[i], t2[i]);
+            else
+                alone.Add(i);
+        }
+
+        Integrate(steps, alone, b1Scale, offResonanceHz, t1, t2, multiplier, recovery);
+    }
+
+    private static void Integrate(
+        PulseSteps steps,
+        List<int> lanes,
+        ReadOnlySpan<double> b1Scale,
+        ReadOnlySpan<double> offResonanceHz,
+        ReadOnlySpan<double> t1,
+        ReadOnlySpan<double> t2,
+        Span<double> multiplier,
+        Span<double> recovery)
+    {
+        var n = lanes.Count;
+        var columns = new double[6 * n];
+        for (var i = 0; i < n; i++)
+        {
+            var lane = lanes[i];
+            (columns[i], columns[n + i], columns[2 * n + i], columns[3 * n + i]) = (b1Scale[lane], offResonanceHz[lane], t1[lane], t2[lane]);
+        }
+
+        Span<double> Column(int number) => columns.AsSpan(number * n, n);
+        RelaxingKernel.Run(steps, Column(0), Column(1), Column(2), Column(3), Column(4), Column(5));
+        for (var i = 0; i < n; i++)
+            (multiplier[lanes[i]], recovery[lanes[i]]) = (columns[4 * n + i], columns[5 * n + i]);
     }
 
     /// <summary>The whole rotation, without relaxation; the phase of the pulse is that at its first instant.</summary>

@@ -145,6 +145,34 @@ public sealed class PulseResponseTests
         }
     }
 
+    /// <summary>Many lanes at one point of the fields share integrations; each of them alone is integrated by itself.</summary>
+    [Theory]
+    [InlineData("gaussian", 1, 0)]
+    [InlineData("gaussian", 0.8, 90)]
+    [InlineData("windowed sinc", 1.2, -300)]
+    [InlineData("hyperbolic secant", 1, 500)]
+    [InlineData("hard", 1, 1500)]
+    public void Longitudinal_ManyTissuesAtOnePoint_AreWithinTheBound(string shape, double b1Scale, double offResonanceHz)
+    {
+        const int Count = 300;
+        double[] Filled(double value) => [.. Enumerable.Repeat(value, Count)];
+        var duration = Shapes[shape] switch { GaussianPulse p => p.Duration, WindowedSincPulse p => p.Duration, HyperbolicSecantPulse p => p.Duration, _ => 0.5 };
+
+        // Over the whole domain, and a few tissues outside it.
+        var t1 = Enumerable.Range(0, Count).Select(i => duration / 0.21 * Math.Exp(5.0 * (i % 17) / 16)).ToArray();
+        var t2 = Enumerable.Range(0, Count).Select(i => Math.Min(2 * t1[i], duration / 2.1 * Math.Exp(6.0 * (i % 19) / 18))).ToArray();
+        var (multiplier, recovery) = (new double[Count], new double[Count]);
+
+        PulseResponse.Longitudinal(Shapes[shape], Filled(b1Scale), Filled(offResonanceHz), t1, t2, multiplier, recovery);
+
+        for (var i = 0; i < Count; i++)
+        {
+            var alone = Map(Shapes[shape], b1Scale, offResonanceHz, t1[i], t2[i]);
+            Approximately.Absolute(alone.Multiplier, multiplier[i], 1e-10);
+            Approximately.Absolute(alone.Recovery, recovery[i], 1e-10);
+        }
+    }
+
     [Fact]
     public void Longitudinal_ValuesOutsideTheRange_AreNamed()
     {

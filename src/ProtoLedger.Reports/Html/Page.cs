@@ -9,7 +9,8 @@ namespace ProtoLedger.Reports.Html;
 /// <param name="Version">In words, such as "version 8, proposed".</param>
 /// <param name="Hash">Short form of the content hash, or empty.</param>
 /// <param name="Date">Date of making.</param>
-internal sealed record PageHeader(string Kind, string Document, string Version, string Hash, string Date);
+/// <param name="HashOf">What the hash is of: content or ledger.</param>
+internal sealed record PageHeader(string Kind, string Document, string Version, string Hash, string Date, string HashOf = "content");
 
 /// <summary>A self-contained page: own style, no script, nothing from outside, and a policy that says so.</summary>
 internal static class Page
@@ -41,13 +42,13 @@ internal static class Page
     }
 
     private static string Short(PageHeader header) =>
-        header.Hash.Length > 0 ? $" <span>content <code>{PageParts.Attribute(header.Hash)}</code></span>" : "";
+        header.Hash.Length > 0 ? $" <span>{header.HashOf} <code>{PageParts.Attribute(header.Hash)}</code></span>" : "";
 
     /// <summary>Margin boxes of printed pages. Identifiers are escaped so that no text can leave its string.</summary>
     private static string Running(PageHeader header)
     {
         var left = $"{header.Document}, {header.Version}";
-        var right = header.Hash.Length > 0 ? $"content {header.Hash}" : header.Kind;
+        var right = header.Hash.Length > 0 ? $"{header.HashOf} {header.Hash}" : header.Kind;
         return $$"""
             @page { margin: 2cm 1.6cm; font: 8pt sans-serif;
               @top-left { content: {{CssString(left)}}; } @top-right { content: {{CssString(right)}}; }

@@ -50,17 +50,19 @@ public static class ChangeAttribution
         if (players.Length == 0)
             return [];
         var targets = Targets(evaluation, edit, series, moved, broken);
-        // What cannot move the series is taken over from the start, so that mixtures are valid wherever possible.
-        var rest = Enumerable.Range(0, edit.Changes.Count).Except(players).ToArray();
-        double[]? Value(IReadOnlyList<int> taken)
+        double[]? Value(int[] moving, IReadOnlyList<int> taken)
         {
-            var mixture = edit.Mix(rest.Concat(taken.Select(i => players[i])).ToHashSet());
+            // What cannot move the series is taken over from the start, so that mixtures are valid wherever possible.
+            var rest = Enumerable.Range(0, edit.Changes.Count).Except(moving);
+            var mixture = edit.Mix(rest.Concat(taken.Select(i => moving[i])).ToHashSet());
             return mixture is null ? null : Values(evaluation, mixture, series, targets);
         }
 
+        if (Value(players, []) is null)
+            players = [.. players, .. Players.Companions(edit, series)];
         if (players.Length > Shapley.MostPlayers)
             return [];
-        var (coupling, shares) = Coupling.Attribute(players.Length, Value, OrderSeed);
+        var (coupling, shares) = Coupling.Attribute(players.Length, taken => Value(players, taken), OrderSeed);
         if (shares.Old.Length != 2 * targets.Count || shares.New.Length != 2 * targets.Count)
             return [];
         return targets.Select((target, k) => (target, k)).Where(t => IsComplete(shares, t.k)).Select(t => Result(t.target, t.k));
@@ -75,7 +77,8 @@ public static class ChangeAttribution
             [
                 .. coupling.Players
                     .Select((members, p) => new AttributionShare(
-                        [.. members.Select(i => edit.Changes[players[i]])], shares.Shares[p, 2 * k], shares.StandardErrors[p, 2 * k]))
+                        [.. members.Select(i => edit.Changes[players[i]]).Where(c => !Players.IsCompanion(c))], shares.Shares[p, 2 * k], shares.StandardErrors[p, 2 * k]))
+                    .Where(share => share.Changes.Count > 0)
                     .OrderByDescending(share => Math.Abs(share.Share)),
             ],
             shares.Orders);

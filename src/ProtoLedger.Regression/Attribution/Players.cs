@@ -13,6 +13,13 @@ internal static class Players
     internal static int[] Of(EditedInput edit, string series, IReadOnlySet<string> tissues) =>
         [.. Enumerable.Range(0, edit.Changes.Count).Where(i => Counts(edit, edit.Changes[i], series, tissues))];
 
+    /// <summary>Changes of the series' allowed ranges: they move no number, but a set value may be valid within its own range alone.</summary>
+    internal static int[] Companions(EditedInput edit, string series) =>
+        [.. Enumerable.Range(0, edit.Changes.Count).Where(i => IsCompanion(edit.Changes[i]) && edit.Changes[i].Change.SeriesId == series)];
+
+    internal static bool IsCompanion(ChangedParameter changed) =>
+        changed.Document == DocumentKind.Protocol && changed.Change.SeriesId is not null && JsonPointer.Tokens(changed.Change.Pointer) is [_, _, "allowedRanges", ..];
+
     private static bool Counts(EditedInput edit, ChangedParameter changed, string series, IReadOnlySet<string> tissues)
     {
         var tokens = JsonPointer.Tokens(changed.Change.Pointer);

@@ -29,7 +29,6 @@ internal static class Documents
             readout: {kind: echoTrain, RepetitionTime: 9000, EchoTime: 120, ExcitationFlipAngle: 90, echoSpacing: 10, EchoTrainLength: 24, RefocusingFlipAngles: [150]}
             timing: {slices: 26, concatenations: 2}
             geometry: {dimensions: 2, FieldOfView: [230, 200], matrix: [320, 256], SliceThickness: 4, sliceGap: 0.4, PixelBandwidth: 200, acceleration: 2}
-            allowedRanges: [{parameter: /readout/RepetitionTime, low: 8800, high: 9400}]
           - id: axial-t1
             title: Axial T1
             readout: {kind: spinEcho, RepetitionTime: 520, EchoTime: 12, ExcitationFlipAngle: 90, RefocusingFlipAngles: [180]}
@@ -41,6 +40,12 @@ internal static class Documents
             timing: {slices: 22}
             geometry: {dimensions: 2, FieldOfView: [230, 200], matrix: [256, 192], SliceThickness: 5, PixelBandwidth: 180}
         """;
+
+    /// <summary>The brain protocol with a range in which the console may set the repetition time.</summary>
+    internal static string BrainWithRange(double low, double high) => Brain.Replace(
+        "sliceGap: 0.4, PixelBandwidth: 200, acceleration: 2}",
+        System.FormattableString.Invariant($"sliceGap: 0.4, PixelBandwidth: 200, acceleration: 2}}\n    allowedRanges: [{{parameter: /readout/RepetitionTime, low: {low}, high: {high}}}]"),
+        StringComparison.Ordinal);
 
     internal const string Three = """
         format: 1

@@ -43,9 +43,10 @@ internal static class CostFindings
                 continue;
             var (before, after) = (Math.Abs(Math.Log(old)), Math.Abs(Math.Log(now)));
             var suppressed = PairFindings.IsSuppressed(evidence, series, key.Tissue!, old, now);
-            var change = suppressed ? old - now : after - before;
+            var change = suppressed ? old - now : Math.Log(now / old);
+            var better = suppressed ? now < old : after > before && (old > 1) == (now > 1);
             yield return new(
-                Math.Abs(change) < PairFindings.Visible ? FindingDirection.Same : change > 0 ? FindingDirection.Better : FindingDirection.Worse,
+                Math.Abs(change) < PairFindings.Visible ? FindingDirection.Same : better ? FindingDirection.Better : FindingDirection.Worse,
                 $"{evidence.Words(key.Tissue!)} against {evidence.Words(reference)}",
                 series.Id,
                 series.Title,

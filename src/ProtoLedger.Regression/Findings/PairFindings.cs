@@ -56,9 +56,10 @@ internal static class PairFindings
         var (subject, reference) = (evidence.Words(key.Tissue!), evidence.Words(key.Reference!));
         var suppressed = IsSuppressed(evidence, series, key.Tissue!, old, now);
         var (before, after) = (Math.Abs(Math.Log(old)), Math.Abs(Math.Log(now)));
-        if (suppressed ? Math.Abs(now - old) < 0.03 : Math.Abs(after - before) < Visible)
+        if (Math.Abs(suppressed ? now - old : Math.Log(now / old)) < Visible)
             return null;
-        var worse = suppressed ? now > old : after < before;
+        // A pair that changes places reads differently even where it is told apart as well as before.
+        var worse = suppressed ? now > old : after < before || (old > 1) != (now > 1);
         var rising = evidence.Rising(key);
         // For a suppressed tissue brighter is worse; for a pair, nearer to equal.
         var share = rising is not { } up ? (double?)null : (suppressed ? now > old : old < now) ? up : 1 - up;
@@ -67,7 +68,7 @@ internal static class PairFindings
         return new Finding(
             suppressed ? FindingKind.Suppression : FindingKind.Contrast,
             worse ? FindingDirection.Worse : FindingDirection.Better,
-            (worse ? 1 : -1) * (suppressed ? 30 + 20 * Math.Min(2, Math.Abs(now - old)) : 25 * Math.Min(1, Math.Abs(after - before) / Math.Max(before, after))),
+            (worse ? 1 : -1) * (suppressed ? 30 + 20 * Math.Min(2, Math.Abs(now - old)) : 25 * Math.Min(1, Math.Abs(Math.Log(now / old)) / Math.Max(before, after))),
             evidence.ScannerId,
             series.Id,
             series.Title,

@@ -11,6 +11,11 @@ internal static class NullObservables
 
     private const int WindowSteps = 96;
 
+    private const int Nodes = 16;
+
+    /// <summary>Up to so many lanes the root finder itself is quick enough.</summary>
+    private const int Few = 8;
+
     /// <summary>Index of the last inversion of a series, or −1: it is the one whose time nulls.</summary>
     internal static int LastInversion(Series series)
     {
@@ -43,18 +48,91 @@ internal static class NullObservables
         ],
     };
 
-    /// <summary>nullTime, ms, or nullDistance, ms: positive where the set time is too long.</summary>
+    /// <summary>Null time, ms.</summary>
     internal static ObservableValues Times(SignalCells cells, ObservableRequest request)
     {
         var context = cells.Context;
         var index = LastInversion(context.Acquisition);
         if (index < 0)
             return ObservableValues.Missing("The series has no inversion.");
-        var found = NullTimes.Find(context.Acquisition, index, context.Setting, cells.Lanes(request.Tissue!, request.Point));
-        if (found.Any(time => time is null))
+        var found = Find(context, index, cells.Lanes(request.Tissue!, request.Point));
+        if (found.Any(double.IsNaN))
             return ObservableValues.Missing($"No inversion time that fits nulls {request.Tissue} for every draw.");
-        var set = InversionTime(context.Acquisition, index);
-        return ObservableValues.Of(Array.ConvertAll(found, time => request.Name == "nullTime" ? time!.Value : set - time!.Value));
+        return ObservableValues.Of(found);
+    }
+
+    /// <summary>Null time of every lane, ms, NaN where there is none; the first lane by the engine's root finder, many lanes by interpolation on the engine's signals.</summary>
+    /// <remarks>
+    /// The signal after an inversion is nearly linear in u = exp(−TI/T1), so three nodes around the sign change give u at zero by Lagrange's inverse
+    /// interpolation to far below a millisecond. Lanes whose null lies outside the nodes go to the root finder.
+    /// </remarks>
+    internal static double[] Find(SeriesContext context, int index, LaneTable lanes)
+    {
+        var nulls = new double[lanes.Count];
+        Array.Fill(nulls, double.NaN);
+        if (lanes.Count > Few && Exact(context, index, lanes, [0])[0] is var first && double.IsFinite(first))
+        {
+            Interpolate(context, index, lanes, first, nulls);
+            nulls[0] = first;
+        }
+
+        int[] open = [.. Enumerable.Range(0, lanes.Count).Where(i => double.IsNaN(nulls[i]))];
+        var exact = Exact(context, index, lanes, open);
+        for (var i = 0; i < open.Length; i++)
+            nulls[open[i]] = exact[i];
+        return nulls;
+    }
+
+    private static double[] Exact(SeriesContext context, int index, LaneTable lanes, int[] which) => which.Length == 0
+        ? []
+        : Array.ConvertAll(NullTimes.Find(context.Acquisition, index, context.Setting, lanes.Select(which)), time => time ?? double.NaN);
+
+    private static void Interpolate(SeriesContext context, int index, LaneTable lanes, double around, double[] nulls)
+    {
+        var nodes = new List<(double Time, double[] Signed)>();
+        for (var node = 0; node <= Nodes; node++)
+        {
+            var time = around * (0.55 + 0.95 * node / Nodes);
+            try
+            {
+                nodes.Add((time, SignalPredictor.Predict(WithInversionTime(context.Acquisition, index, time), context.Setting, lanes).Signed));
+            }
+            catch (ArgumentException)
+            {
+                // This inversion time leaves no room for the pulses or the readout.
+                continue;
+            }
+        }
+
+        for (var lane = 0; lane < nulls.Length && nodes.Count >= 3; lane++)
+        {
+            for (var k = 1; k < nodes.Count; k++)
+            {
+                if (nodes[k - 1].Signed[lane] >= 0 || nodes[k].Signed[lane] < 0)
+                    continue;
+                var middle = Math.Clamp(k - (-nodes[k - 1].Signed[lane] < nodes[k].Signed[lane] ? 1 : 0), 1, nodes.Count - 2);
+                nulls[lane] = AtZero(nodes, middle, lane, lanes.T1[lane]);
+                break;
+            }
+        }
+    }
+
+    private static double AtZero(List<(double Time, double[] Signed)> nodes, int middle, int lane, double t1)
+    {
+        var u = 0.0;
+        for (var i = middle - 1; i <= middle + 1; i++)
+        {
+            var weight = Math.Exp(-nodes[i].Time / t1);
+            for (var j = middle - 1; j <= middle + 1; j++)
+            {
+                if (j != i)
+                    weight *= nodes[j].Signed[lane] / (nodes[j].Signed[lane] - nodes[i].Signed[lane]);
+            }
+
+            u += weight;
+        }
+
+        return -t1 * Math.Log(u);
     }
 
     /// <summary>Width, ms, of the connected window of inversion times around the null in which |tissue| / |reference| stays below <see cref="DarkRatio"/>.</summary>
@@ -66,10 +144,10 @@ internal static class NullObservables
         if (index < 0)
             return ObservableValues.Missing("The series has no inversion.");
         var (tissue, reference) = (cells.Lanes(request.Tissue!, request.Point), cells.Lanes(request.Reference!, request.Point));
-        var nulls = NullTimes.Find(context.Acquisition, index, context.Setting, tissue);
-        if (nulls.Any(time => time is null))
+        var nulls = Find(context, index, tissue);
+        if (nulls.Any(double.IsNaN))
             return ObservableValues.Missing($"No inversion time that fits nulls {request.Tissue} for every draw.");
-        var (low, high) = (0.6 * nulls.Min()!.Value, 1.4 * nulls.Max()!.Value);
+        var (low, high) = (0.6 * nulls.Min(), 1.4 * nulls.Max());
         var ratios = new List<(double Time, double[] Ratio)>();
         for (var step = 0; step <= WindowSteps; step++)
         {
@@ -87,7 +165,7 @@ internal static class NullObservables
             }
         }
 
-        return ObservableValues.Of([.. nulls.Select((time, draw) => Width(ratios, draw, time!.Value))]);
+        return ObservableValues.Of([.. nulls.Select((time, draw) => Width(ratios, draw, time))]);
     }
 
     private static double Width(List<(double Time, double[] Ratio)> ratios, int draw, double nullTime)

@@ -14,6 +14,7 @@ internal sealed class ObservableComputer
     private readonly List<ObservableRequest> requests = [];
     private readonly Dictionary<ObservableRequest, ObservableValues> missing = [];
     private readonly Dictionary<(string Tissue, FieldPoint Point), SignalDerivatives> derivatives = [];
+    private readonly Dictionary<ObservableRequest, ObservableValues> nulls = [];
 
     internal ObservableComputer(SeriesContext context, int[] draws) => cells = new(context, draws);
 
@@ -77,7 +78,8 @@ internal sealed class ObservableComputer
         "contrastDifference" => Pair(request, (a, b) => a - b, Contrast.Difference),
         "contrastRatio" or "residualRatio" => Pair(request, (a, b) => a / b, Contrast.Ratio),
         "contrastToNoise" => Pair(request, (a, b) => ToNoise(a - b), (a, b) => ToNoise(Contrast.Difference(a, b))),
-        "nullTime" or "nullDistance" => NullObservables.Times(cells, request),
+        "nullTime" => Null(request),
+        "nullDistance" => Distance(request),
         "nullWindow" => NullObservables.Window(cells, request),
         "weightingT1" => Weigh(request, d => d.ByLogT1),
         "weightingT2" => Weigh(request, d => d.ByLogT2),
@@ -87,6 +89,23 @@ internal sealed class ObservableComputer
         "blurWidth" => TrainObservables.BlurWidth(cells, request),
         _ => Scalar(request.Name),
     };
+
+    private ObservableValues Null(ObservableRequest request)
+    {
+        var key = request with { Name = "nullTime" };
+        if (!nulls.TryGetValue(key, out var times))
+            nulls[key] = times = NullObservables.Times(cells, key);
+        return times;
+    }
+
+    /// <summary>ms; positive where the inversion time is set too long.</summary>
+    private ObservableValues Distance(ObservableRequest request)
+    {
+        var times = Null(request);
+        return times.Because is not null
+            ? times
+            : ObservableValues.Of(Array.ConvertAll(times.Shown, time => NullWindow.Distance(NullObservables.InversionTime(Series, NullObservables.LastInversion(Series)), time)));
+    }
 
     private ObservableValues Scalar(string name)
     {

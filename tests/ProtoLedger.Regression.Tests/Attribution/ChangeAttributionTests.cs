@@ -22,7 +22,7 @@ public sealed class ChangeAttributionTests
     public void Attribute_ThreeParameters_EqualsTheAverageOverTheSixOrders(string key)
     {
         (string Pointer, double Value)[] settings =
-            [("/series/0/readout/RepetitionTime", 6500), ("/series/0/preparations/0/InversionTime", 2100), ("/series/0/readout/EchoTime", 100)];
+            [("/series/0/readout/RepetitionTime", 6500), ("/series/0/preparations/0/InversionTime", 2100), ("/series/0/readout/EchoTime", 80)];
         var before = Documents.Input(expectations: null);
         var result = Of(Attribute(before, before.With(settings)), key);
         // The oracle evaluates documents edited step by step through the public evaluation, in every order.
@@ -87,7 +87,7 @@ public sealed class ChangeAttributionTests
     [Fact]
     public void Attribute_EchoSpacingWithEchoTime_IsOnePlayer()
     {
-        // 120 ms is no multiple of 9 ms, and 117 ms none of 10 ms: neither is valid apart.
+        // 100 ms is no multiple of 9 ms, and 117 ms none of 10 ms: neither is valid apart.
         var before = Documents.Input(expectations: null);
         var after = before.With(("/series/0/readout/echoSpacing", 9), ("/series/0/readout/EchoTime", 117), ("/series/0/readout/RepetitionTime", 8000));
         var result = Of(Attribute(before, after), "axial-fluid-nulled-t2/signal(white-matter)@nominal");
@@ -101,7 +101,7 @@ public sealed class ChangeAttributionTests
     {
         var before = Documents.Input(expectations: null);
         var after = Documents.Input(
-            protocol: Documents.Brain.Replace("    preparations:\n      - {kind: inversion, InversionTime: 2390}\n", "", StringComparison.Ordinal), expectations: null)
+            protocol: Documents.Brain.Replace("    preparations:\n      - {kind: inversion, InversionTime: 2404}\n", "", StringComparison.Ordinal), expectations: null)
             .With(("/series/0/readout/RepetitionTime", 8000));
         var result = Of(Attribute(before, after), "axial-fluid-nulled-t2/signal(csf)@nominal");
         Assert.Equal(2, result.Shares.Count);

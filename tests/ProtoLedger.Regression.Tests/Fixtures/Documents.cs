@@ -25,8 +25,8 @@ internal static class Documents
           - id: axial-fluid-nulled-t2
             title: Axial fluid-nulled T2
             preparations:
-              - {kind: inversion, InversionTime: 2390}
-            readout: {kind: echoTrain, RepetitionTime: 9000, EchoTime: 120, ExcitationFlipAngle: 90, echoSpacing: 10, EchoTrainLength: 24, RefocusingFlipAngles: [150]}
+              - {kind: inversion, InversionTime: 2404}
+            readout: {kind: echoTrain, RepetitionTime: 9000, EchoTime: 100, ExcitationFlipAngle: 90, echoSpacing: 10, EchoTrainLength: 24, RefocusingFlipAngles: [150]}
             timing: {slices: 26, concatenations: 2}
             geometry: {dimensions: 2, FieldOfView: [230, 200], matrix: [320, 256], SliceThickness: 4, sliceGap: 0.4, PixelBandwidth: 200, acceleration: 2}
           - id: axial-t1
@@ -144,7 +144,7 @@ internal static class Documents
             conditions: [well-shimmed]
             basis: absolute
             relation: atMost
-            limit: 0.6
+            limit: 0.46
           - id: no-brighter-fluid
             title: fluid no brighter than before
             why: readers know the look

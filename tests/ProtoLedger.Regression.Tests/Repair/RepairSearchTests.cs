@@ -13,7 +13,6 @@ public sealed class RepairSearchTests
     {
         var broken = Documents.Input().With(("/series/0/readout/RepetitionTime", 6000));
         var offers = RepairSearch.Offers(Evaluation, broken, Documents.Input(), "fluid-dark");
-        TestContext.Current.SendDiagnosticMessage(string.Join("\n", offers.Select(o => o.Sentence)));
         var setting = Assert.Single(offers[0].Settings);
         Assert.Equal("/preparations/0/InversionTime", setting.Pointer);
         // Null after an imperfect inversion f, train long against T1 ignored: T1 ln((1 + f)/(1 + f E)), E = exp(−(TR − TL)/T1) with TL the train's 240 ms.

@@ -12,6 +12,10 @@ public sealed class PrepareDemo(KeepAccounts accounts, EnrolSigner enrolment)
 {
     private static readonly string[] Signers = [Roles.Physicist, Roles.Radiologist, Roles.LeadTechnologist];
 
+    /// <summary>Whether people of a role sign.</summary>
+    /// <param name="role">Role.</param>
+    public static bool Signs(string role) => Signers.Contains(role);
+
     /// <summary>Who may.</summary>
     public static RoleRule Rule => RoleRule.SystemOnly;
 
@@ -33,7 +37,7 @@ public sealed class PrepareDemo(KeepAccounts accounts, EnrolSigner enrolment)
             if (created.Refusal is Conflict)
                 continue;
             made.Add(Demand(created));
-            if (Signers.Contains(person.Role))
+            if (Signs(person.Role))
                 Demand(await enrolment.RunAsync(Caller.System, new Enrolment(person.Name, passphrase), cancellationToken));
         }
 

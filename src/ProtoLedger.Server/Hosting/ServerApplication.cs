@@ -22,7 +22,8 @@ namespace ProtoLedger.Server.Hosting;
 /// <summary>Puts the server together.</summary>
 internal static class ServerApplication
 {
-    public const string DefaultUrl = "http://127.0.0.1:5080";
+    private const string WebUrl = "http://127.0.0.1:5080";
+    private const string WorkerUrl = "http://127.0.0.1:5081";
 
     private static readonly Dictionary<string, string> Switches = new()
     {
@@ -37,7 +38,7 @@ internal static class ServerApplication
         builder.Configuration.AddCommandLine(args, Switches);
         builder.Services.AddOptions<ServerOptions>().BindConfiguration(ServerOptions.Section).ValidateDataAnnotations().ValidateOnStart();
         if (builder.Configuration["urls"] is null && builder.Configuration["http_ports"] is null)
-            builder.WebHost.UseUrls(DefaultUrl);
+            builder.WebHost.UseUrls(builder.Configuration[Switches["--role"]] == "worker" ? WorkerUrl : WebUrl);
         builder.WebHost.ConfigureKestrel(kestrel =>
         {
             kestrel.AddServerHeader = false;
@@ -66,7 +67,12 @@ internal static class ServerApplication
         services.AddSingleton<Readiness>();
         services.AddProtoLedgerStorage(database.ConnectionString);
         services.AddProtoLedgerApplication(new SiteOptions(options.SiteName, options.Origin, SealingKey.Read(options)));
+        services.AddSingleton(options);
+        services.AddSingleton<FirstStart>();
+        services.AddSingleton<DemoPeople>();
         services.AddHostedService<ClusterGuard>();
+        if (options.Works)
+            services.AddHostedService<RunService>();
         services.AddScoped<CurrentCaller>();
         services.AddScoped(provider => provider.GetRequiredService<CurrentCaller>().Caller);
         services.ConfigureHttpJsonOptions(json => JsonSettings.Apply(json.SerializerOptions));

@@ -23,11 +23,11 @@ internal sealed class ServerOptions
     public bool? Demo { get; set; }
 
     /// <summary>Password of every demo person; null means random.</summary>
-    [MinLength(8)]
+    [MinLength(1)]
     public string? DemoPassword { get; set; }
 
     /// <summary>Signing passphrase of every demo signer; null means "sign " and the demo password, or random.</summary>
-    [MinLength(8)]
+    [MinLength(1)]
     public string? DemoSigningPassphrase { get; set; }
 
     /// <summary>Name of the site, as its certificates show it.</summary>

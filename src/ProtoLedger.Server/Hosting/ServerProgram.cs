@@ -20,8 +20,14 @@ internal static class ServerProgram
             await using var database = await DatabaseAccess.OpenAsync(builder.Configuration, options, stop.Token);
             await Migrator.MigrateAsync(database.ConnectionString, stop.Token);
             await using var app = ServerApplication.Build(builder, options, database);
+            var start = app.Services.GetRequiredService<FirstStart>();
+            var signIn = await start.FillAsync(stop.Token);
             await app.StartAsync(stop.Token);
+            if (options.Works)
+                await start.FinishRunsAsync(stop.Token);
             app.Services.GetRequiredService<Readiness>().MarkStarted();
+            foreach (var line in options.ServesWeb ? signIn : [])
+                await Console.Out.WriteLineAsync(line);
             await Console.Out.WriteLineAsync($"ready {app.Urls.First()}");
             await app.WaitForShutdownAsync(stop.Token);
             return 0;
@@ -30,7 +36,7 @@ internal static class ServerProgram
         {
             return 0;
         }
-        catch (Exception error) when (error is PrivateClusterException or OptionsValidationException or MigrationException)
+        catch (Exception error) when (error is PrivateClusterException or OptionsValidationException or MigrationException or StartupException or InvalidDataException)
         {
             await Console.Error.WriteLineAsync(error.Message);
             return 1;

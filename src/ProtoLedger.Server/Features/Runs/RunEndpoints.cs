@@ -16,6 +16,10 @@ internal static class RunEndpoints
         group.MapPost("", StartAsync).WithName("StartRun").WithSummary("Recompute every stored version").Needs(EnqueueRun.Rule).NeedsIdempotencyKey();
         group.MapGet("/{id:long}", GetAsync).WithName("GetRun").WithSummary("A run with its counts").Needs(ReadRuns.Rule).Refuses(Problems.Missing);
         group.MapGet("/{id:long}/progress", ProgressAsync).WithName("GetRunProgress").WithSummary("How far a run is").Needs(ReadRuns.Rule).Refuses(Problems.Missing);
+        group.MapGet("/{id:long}/findings", FindingsAsync).WithName("GetRunFindings").WithSummary("What a completed run found against the run before it")
+            .Needs(CompareRuns.Rule).Refuses(Problems.Missing, Problems.StillComputing);
+        group.MapGet("/{from:long}/compare/{to:long}", CompareAsync).WithName("CompareRuns").WithSummary("What differs between two runs")
+            .Needs(CompareRuns.Rule).Refuses(Problems.Missing, Problems.Clash);
         return routes;
     }
 
@@ -45,6 +49,31 @@ internal static class RunEndpoints
 
     private static async Task<Results<Ok<RunProgress>, Problem>> ProgressAsync(Caller caller, ReadRuns useCase, long id, CancellationToken cancellationToken) =>
         (await useCase.ProgressAsync(caller, id, cancellationToken)).ToOk();
+
+    private static async Task<Results<Ok<RunFindings>, Problem>> FindingsAsync(Caller caller, CompareRuns useCase, long id, CancellationToken cancellationToken) =>
+        (await useCase.FindingsAsync(caller, id, cancellationToken)).ToOk();
+
+    private static async Task<Results<Ok<ComparisonResponse>, Problem>> CompareAsync(
+        Caller caller, CompareRuns useCase, long from, long to, CancellationToken cancellationToken) =>
+        (await useCase.RunAsync(caller, from, to, cancellationToken)).ToOk(ComparisonResponse.Of);
+}
+
+/// <summary>What differs between two runs.</summary>
+/// <param name="From">The earlier run.</param>
+/// <param name="To">The later run.</param>
+/// <param name="Compared">Results that both hold.</param>
+/// <param name="OnlyFrom">Results that only the earlier holds.</param>
+/// <param name="OnlyTo">Results that only the later holds.</param>
+/// <param name="Moved">Results whose numbers moved, most moved first.</param>
+/// <param name="NewlyFailing">Expectations that fail in the later run only.</param>
+/// <param name="NewlyHolding">Expectations that hold in the later run only.</param>
+internal sealed record ComparisonResponse(
+    RunResponse From, RunResponse To, int Compared, int OnlyFrom, int OnlyTo,
+    IReadOnlyList<MovedVersion> Moved, IReadOnlyList<ChangedVerdict> NewlyFailing, IReadOnlyList<ChangedVerdict> NewlyHolding)
+{
+    public static ComparisonResponse Of(RunComparison comparison) => new(
+        RunResponse.From(comparison.From), RunResponse.From(comparison.To), comparison.Compared, comparison.OnlyFrom, comparison.OnlyTo,
+        comparison.Moved, comparison.NewlyFailing, comparison.NewlyHolding);
 }
 
 /// <summary>A run that was queued.</summary>

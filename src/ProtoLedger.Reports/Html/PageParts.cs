@@ -52,7 +52,7 @@ internal static partial class PageParts
                 .Replace(plain, marked, StringComparison.Ordinal);
         }
 
-        return Unit().Replace(dressed, "\u00A0$1");
+        return Date().Replace(Unit().Replace(dressed, "\u00A0$1"), "<span class=\"date\">$0</span>");
     }
 
     /// <summary>Puts plots and pictures where the Markdown refers to them.</summary>
@@ -98,6 +98,10 @@ internal static partial class PageParts
 
     [GeneratedRegex("[^a-z0-9]+")]
     private static partial Regex NotSlug();
+
+    /// <summary>A date in text, which must not break at its hyphens.</summary>
+    [GeneratedRegex("(?<=>[^<]*)\\b[0-9]{4}-[0-9]{2}-[0-9]{2}\\b")]
+    private static partial Regex Date();
 
     /// <summary>A blank between a number and its unit, in text.</summary>
     [GeneratedRegex("(?<=>[^<]*[0-9]) (ms|Hz|px|min|mm|T|%)(?=[^A-Za-z0-9])")]

@@ -29,7 +29,7 @@ public static class TimelineChart
         foreach (var (time, label) in Ticks(from, until))
         {
             canvas.Line(At(time), Top, At(time), bottom, Stroke.Grid);
-            canvas.Label(At(time), bottom + 16, label, "middle", size: 10.5);
+            canvas.Label(At(time), bottom + 16, label, time == from ? "start" : time == until ? "end" : "middle", size: 10.5);
         }
 
         for (var i = 0; i < rows.Count; i++)

@@ -9,20 +9,24 @@ internal static class TissueRoles
         // The first is the reference.
         ["brain"] = ["white-matter", "grey-matter", "csf", "lesion", "fat"],
         ["pituitary"] = ["white-matter", "grey-matter", "csf", "lesion", "fat"],
-        ["spine"] = ["marrow-vertebral", "disc-nucleus", "disc-annulus", "csf", "fat", "muscle"],
-        ["knee"] = ["muscle", "cartilage", "synovial-fluid", "marrow-yellow", "fat"],
-        ["shoulder"] = ["muscle", "cartilage", "synovial-fluid", "marrow-yellow", "fat"],
+        ["orbit"] = ["white-matter", "muscle", "csf", "fat", "lesion"],
+        ["cervical-spine"] = ["vertebral-marrow", "csf", "white-matter", "disc-nucleus", "fat", "muscle"],
+        ["lumbar-spine"] = ["vertebral-marrow", "csf", "disc-nucleus", "disc-annulus", "fat", "muscle"],
+        ["knee"] = ["muscle", "cartilage", "synovial-fluid", "yellow-marrow", "fat"],
+        ["shoulder"] = ["muscle", "cartilage", "synovial-fluid", "yellow-marrow", "fat"],
+        ["hip"] = ["muscle", "synovial-fluid", "yellow-marrow", "fat"],
         ["liver"] = ["liver", "spleen", "kidney-cortex", "fat", "muscle"],
         ["prostate"] = ["muscle", "prostate-peripheral", "prostate-transition", "fat"],
-        ["heart"] = ["myocardium", "blood-arterial", "fat", "muscle"],
+        ["heart"] = ["myocardium", "arterial-blood", "fat", "muscle"],
+        ["whole-body"] = ["muscle", "vertebral-marrow", "yellow-marrow", "liver", "spleen", "fat", "csf"],
     };
 
     private static readonly string[] Elsewhere = ["muscle", "fat", "csf"];
 
-    private static readonly string[] Flowing = ["csf", "blood-arterial", "blood-venous"];
+    private static readonly string[] Flowing = ["csf", "arterial-blood", "venous-blood"];
 
     private static readonly string[] Enhancing =
-        ["lesion", "blood-arterial", "blood-venous", "liver", "spleen", "kidney-cortex", "kidney-medulla", "myocardium", "prostate-peripheral", "prostate-transition"];
+        ["lesion", "arterial-blood", "venous-blood", "liver", "spleen", "kidney-cortex", "kidney-medulla", "myocardium", "prostate-peripheral", "prostate-transition"];
 
     /// <summary>Tissues of a region, the reference first.</summary>
     internal static IReadOnlyList<string> Of(string bodyRegion) => ByRegion.GetValueOrDefault(bodyRegion, Elsewhere);

@@ -7,7 +7,7 @@ namespace ProtoLedger.Regression.Prediction;
 /// <summary>Observables that need every echo of a train or the train without relaxation.</summary>
 internal static class TrainObservables
 {
-    private const double Endless = 1e9;
+    private const double Endless = 1e6;
 
     /// <summary>Width of the point-spread function, pixels; 1.2067 without a train.</summary>
     internal static ObservableValues BlurWidth(SignalCells cells, ObservableRequest request)

@@ -199,19 +199,25 @@ public static class RepairSearch
     /// <summary>Tries settings: whether the document validates and the expectation holds then.</summary>
     private sealed class Trial(VersionEvaluation evaluation, EvaluationInput broken, EvaluationInput? before, Expectation expectation)
     {
-        private readonly int[] draws = [.. Enumerable.Range(-1, broken.Sampling.Samples + 1)];
+        private readonly int[] all = [.. Enumerable.Range(-1, broken.Sampling.Samples + 1)];
 
         internal bool Holds((string Pointer, double Value)[] settings)
         {
             if (SeriesEdit.Apply(broken.Protocol, expectation.Series, settings) is not { } proposal)
                 return false;
             var context = evaluation.Context(broken with { Protocol = proposal }, proposal.Document.Series.First(s => s.Id == expectation.Series));
+            // What fails at the means cannot hold for 95 % of draws around them: most candidates end here.
+            return Outcome(context, [-1, -1]).NominalVerdict == Verdict.Holds && Outcome(context, all).Verdict == Verdict.Holds;
+        }
+
+        private ExpectationOutcome Outcome(SeriesContext context, int[] draws)
+        {
             var judge = new ExpectationJudge(expectation, context);
             var computer = SeriesEvaluation.Compute(context, draws, [], [judge]);
             var old = judge.Paired && before?.Protocol.Document.Series.FirstOrDefault(s => s.Id == expectation.Series) is { } earlier
                 ? SeriesEvaluation.Compute(evaluation.Context(before, earlier), draws, [], [judge])
                 : null;
-            return judge.Outcome(computer, old, null).Verdict == Verdict.Holds;
+            return judge.Outcome(computer, old, null);
         }
     }
 }

@@ -193,6 +193,16 @@ public sealed partial class ChangeReportTests
     }
 
     [Fact]
+    public void Fragment_OfAStoredReport_IsItsMainElement()
+    {
+        var fragment = ReportPage.Fragment(Rendered.Html);
+        Assert.StartsWith("<div class=\"opening\">", fragment, StringComparison.Ordinal);
+        Assert.EndsWith("</section>\n", fragment, StringComparison.Ordinal);
+        Assert.Contains(fragment, Html, StringComparison.Ordinal);
+        Assert.Throws<FormatException>(() => ReportPage.Fragment("no report"u8));
+    }
+
+    [Fact]
     public void Render_NumberThatIsNotFinite_IsRefused()
     {
         var report = SampleReport.Cut with { Effects = [SampleReport.Cut.Effects[0] with { Before = new PredictedValue(double.NaN, 0, 0) }] };

@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using System.Formats.Asn1;
 using System.Security.Cryptography;
 
@@ -25,12 +26,15 @@ internal sealed class SignatureFile
     public byte[] Signature { get; }
 
     /// <summary>Either the file or the verdict that refuses it.</summary>
-    public static (SignatureFile? File, SignatureVerdict? Refusal) Read(byte[] bytes)
+    /// <param name="bytes">The whole file.</param>
+    /// <param name="known">Certificates met before, by their bytes' hash; new ones are added.</param>
+    public static (SignatureFile? File, SignatureVerdict? Refusal) Read(
+        byte[] bytes, ConcurrentDictionary<Digest, Parsed<SigningCertificate>> known)
     {
         try
         {
             var outer = Der.Open(bytes, "the file");
-            return Der.Read("the file", () => Read(outer.ReadSequence(), bytes));
+            return Der.Read("the file", () => Read(outer.ReadSequence(), bytes, known));
         }
         catch (FormatException fault)
         {
@@ -46,7 +50,8 @@ internal sealed class SignatureFile
         return writer.Encode();
     }
 
-    private static (SignatureFile?, SignatureVerdict?) Read(AsnReader content, byte[] bytes)
+    private static (SignatureFile?, SignatureVerdict?) Read(
+        AsnReader content, byte[] bytes, ConcurrentDictionary<Digest, Parsed<SigningCertificate>> known)
     {
         Demand(content.ReadObjectIdentifier() == Oids.SignedData, "it is not signed data");
         var signedData = content.ReadSequence(Zero).ReadSequence();
@@ -57,7 +62,7 @@ internal sealed class SignatureFile
         var certificates = signedData.ReadSequence(Zero);
         var der = certificates.ReadEncodedValue().ToArray();
         Demand(!certificates.HasData, "it has more than one certificate");
-        if (SigningCertificate.Parse(der) is not Parsed<SigningCertificate>.Good(var certificate))
+        if (known.GetOrAdd(Digest.Of(der), _ => SigningCertificate.Parse(der)) is not Parsed<SigningCertificate>.Good(var certificate))
         {
             return (null, new SignatureVerdict.CertificateMalformed("it is not one DER certificate"));
         }

@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using System.Security.Cryptography.X509Certificates;
 
 namespace ProtoLedger.Ledger.Signatures;
@@ -10,13 +11,19 @@ namespace ProtoLedger.Ledger.Signatures;
 /// </param>
 public sealed class SignatureVerifier(SigningCertificate authority, RevocationList? revocations)
 {
+    // Checked once for all signatures: a bundle has thousands of them by a few people.
+    private readonly Lazy<bool> authoritySignedItself = new(() => authority.IsSignedBy(authority));
+    private readonly Lazy<bool> authoritySignedList = new(() => revocations is not null && revocations.IsSignedBy(authority));
+    private readonly ConcurrentDictionary<Digest, bool> issued = new();
+    private readonly ConcurrentDictionary<Digest, Parsed<SigningCertificate>> certificates = new();
+
     /// <summary>Checks one signature; the first fault found is the verdict.</summary>
     /// <param name="manifest">Bytes of manifest.json.</param>
     /// <param name="cms">Bytes of the .p7s file.</param>
     /// <param name="pinned">Certificate fingerprint that the ledger holds for this signature.</param>
     public SignatureVerdict Verify(ReadOnlySpan<byte> manifest, ReadOnlySpan<byte> cms, Digest pinned)
     {
-        var (file, refusal) = SignatureFile.Read(cms.ToArray());
+        var (file, refusal) = SignatureFile.Read(cms.ToArray(), certificates);
         if (file is null)
         {
             return refusal!;
@@ -27,31 +34,33 @@ public sealed class SignatureVerifier(SigningCertificate authority, RevocationLi
             return new SignatureVerdict.ContentChanged(file.ContentDigest, actual);
         }
 
-        if (SignatureManifest.Parse(manifest) is not Parsed<SignatureManifest>.Good(var content))
+        return SignatureManifest.Parse(manifest) switch
         {
-            return new SignatureVerdict.ManifestMalformed(((Parsed<SignatureManifest>.Bad)SignatureManifest.Parse(manifest)).Reason);
-        }
-
-        return AuthorityFault(content.Time)
-            ?? RevocationListFault(content.Time)
-            ?? CertificateFault(file.Certificate, content.Time)
-            ?? SignatureFault(file, content, pinned)
-            ?? new SignatureVerdict.Good(content, file.Certificate);
+            Parsed<SignatureManifest>.Bad(var reason) => new SignatureVerdict.ManifestMalformed(reason),
+            var good => Verify(file, good.Require(), pinned),
+        };
     }
+
+    private SignatureVerdict Verify(SignatureFile file, SignatureManifest content, Digest pinned) =>
+        AuthorityFault(content.Time)
+        ?? RevocationListFault(content.Time)
+        ?? CertificateFault(file.Certificate, content.Time)
+        ?? SignatureFault(file, content, pinned)
+        ?? new SignatureVerdict.Good(content, file.Certificate);
 
     private SignatureVerdict.AuthorityUnusable? AuthorityFault(DateTimeOffset at) =>
         !authority.IsAuthority ? new SignatureVerdict.AuthorityUnusable("it is no authority (basicConstraints)")
         : authority.KeyUsage is not { } usage || !usage.HasFlag(X509KeyUsageFlags.KeyCertSign) || !usage.HasFlag(X509KeyUsageFlags.CrlSign)
             ? new SignatureVerdict.AuthorityUnusable("its key usage lacks signing certificates and revocation lists")
         : !authority.HasP256Key() ? new SignatureVerdict.AuthorityUnusable("its key is not P-256")
-        : !authority.IsSignedBy(authority) ? new SignatureVerdict.AuthorityUnusable("it is not signed by itself")
+        : !authoritySignedItself.Value ? new SignatureVerdict.AuthorityUnusable("it is not signed by itself")
         : at < authority.NotBefore || WholeSecond(at) > authority.NotAfter
             ? new SignatureVerdict.AuthorityUnusable($"it is valid from {authority.NotBefore:u} to {authority.NotAfter:u}, the signature is of {at:u}")
         : null;
 
     private SignatureVerdict.RevocationListUnusable? RevocationListFault(DateTimeOffset at) =>
         revocations is null ? null
-        : !revocations.IsSignedBy(authority) ? new SignatureVerdict.RevocationListUnusable("the trusted authority did not sign it")
+        : !authoritySignedList.Value ? new SignatureVerdict.RevocationListUnusable("the trusted authority did not sign it")
         : revocations.ThisUpdate < WholeSecond(at)
             ? new SignatureVerdict.RevocationListUnusable($"it is of {revocations.ThisUpdate:u}, older than the signature of {at:u}")
         : null;
@@ -60,7 +69,7 @@ public sealed class SignatureVerifier(SigningCertificate authority, RevocationLi
         !certificate.IssuerName.AsSpan().SequenceEqual(authority.SubjectName) ? new SignatureVerdict.ForeignAuthority(certificate.IssuerText)
         : certificate.SignatureAlgorithm != Oids.EcdsaWithSha256 || certificate.InnerSignatureAlgorithm != Oids.EcdsaWithSha256
             ? new SignatureVerdict.WeakAlgorithm("the signer's certificate", certificate.SignatureAlgorithm)
-        : !certificate.IsSignedBy(authority) ? new SignatureVerdict.CertificateForged()
+        : !issued.GetOrAdd(certificate.Fingerprint, _ => certificate.IsSignedBy(authority)) ? new SignatureVerdict.CertificateForged()
         : !certificate.HasP256Key() ? new SignatureVerdict.WeakAlgorithm("the signer's key", "another key than P-256")
         : certificate.IsAuthority ? new SignatureVerdict.WrongUsage("it is an authority")
         : certificate.KeyUsage is not { } usage || !usage.HasFlag(X509KeyUsageFlags.DigitalSignature) || !usage.HasFlag(X509KeyUsageFlags.NonRepudiation)

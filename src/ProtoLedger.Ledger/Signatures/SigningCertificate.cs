@@ -14,6 +14,7 @@ public sealed class SigningCertificate
     private SigningCertificate(byte[] der)
     {
         this.der = der;
+        Fingerprint = Digest.Of(der);
         (signedPart, SignatureAlgorithm, InnerSignatureAlgorithm, signature) = Split(der);
         using var certificate = X509CertificateLoader.LoadCertificate(der);
         Serial = certificate.SerialNumber;
@@ -31,7 +32,7 @@ public sealed class SigningCertificate
     }
 
     /// <summary>SHA-256 of the DER bytes: what a ledger leaf pins.</summary>
-    public Digest Fingerprint => Digest.Of(der);
+    public Digest Fingerprint { get; }
 
     /// <summary>Serial number, upper-case hexadecimal.</summary>
     public string Serial { get; }

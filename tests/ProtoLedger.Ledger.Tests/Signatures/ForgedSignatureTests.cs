@@ -217,7 +217,7 @@ public sealed class ForgedSignatureTests
     private static SignatureVerdict WithForeignValue(TestSite site)
     {
         var (manifest, cms) = Good(site.Physicist);
-        var (file, _) = SignatureFile.Read(cms);
+        var (file, _) = SignatureFile.Read(cms, new());
         using var thief = ECDsa.Create(ECCurve.NamedCurves.nistP256);
         byte[] value;
         do

@@ -8,16 +8,16 @@ public static class CrossDocumentValidation
     /// <summary>All errors; empty when the document fits.</summary>
     /// <param name="document">The document, already valid by itself.</param>
     /// <param name="others">The current documents; a predecessor of <paramref name="document"/> among them is replaced.</param>
-    /// <remarks>Errors of another document that this one would break carry the empty pointer and name that document.</remarks>
+    /// <remarks>Other documents are looked at once the document itself fits. Errors of another document that this one would break carry the empty pointer and name that document.</remarks>
     public static IReadOnlyList<DocumentError> Validate(LedgerDocument document, DocumentSet others)
     {
-        var before = others;
         var after = others.With(document);
+        if (Own(document, after) is { Count: > 0 } own)
+            return own;
         var errors = new ErrorList();
-        errors.AddAll(Own(document, after));
         foreach (var dependent in Dependents(document, after))
         {
-            var known = Own(dependent, before).ToHashSet();
+            var known = Own(dependent, others).ToHashSet();
             foreach (var error in Own(dependent, after).Where(error => !known.Contains(error)))
                 errors.Add(
                     "", $"{DocumentKinds.Word(dependent.Kind)} {dependent.Id}", error.Limit,

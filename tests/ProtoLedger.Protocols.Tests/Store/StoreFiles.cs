@@ -1,5 +1,5 @@
+using System.Collections.Concurrent;
 using ProtoLedger.Protocols.Documents;
-using ProtoLedger.Protocols.Formats;
 using ProtoLedger.Protocols.Store;
 using ProtoLedger.Protocols.Validation;
 
@@ -8,6 +8,8 @@ namespace ProtoLedger.Protocols.Tests.Store;
 /// <summary>The protocol store of the repository.</summary>
 internal static class StoreFiles
 {
+    private static readonly ConcurrentDictionary<string, ParseResult.Parsed> Parsed = new();
+
     public static string Folder { get; } = Path.Combine(Root(), "protocol-store");
 
     public static IReadOnlyList<HistoryEntry> History { get; } = StoreReader.ReadHistory(Text("history.yaml")).Require();
@@ -25,7 +27,7 @@ internal static class StoreFiles
 
     public static string Text(string path) => File.ReadAllText(Path.Combine(Folder, path));
 
-    public static ParseResult.Parsed Read(string path) => Samples.Read(Text(path));
+    public static ParseResult.Parsed Read(string path) => Parsed.GetOrAdd(path, _ => Samples.Read(Text(path)));
 
     public static ParseResult.Parsed Read(HistoryEntry entry) => Read(entry.Path);
 

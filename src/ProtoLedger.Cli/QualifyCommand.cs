@@ -15,12 +15,13 @@ internal static class QualifyCommand
     {
         var files = new Argument<FileInfo[]>("FILE") { Description = "Files of reference vectors.", Arity = ArgumentArity.OneOrMore };
         var json = new Option<bool>("--json") { Description = "Print JSON." };
-        var command = new Command("qualify", "Evaluate reference vectors with the prediction engine and compare with what is expected.") { files, json };
-        command.SetAction(result => Run(result.GetRequiredValue(files), result.GetValue(json), result.InvocationConfiguration.Output, result.InvocationConfiguration.Error));
+        var table = new Option<bool>("--table") { Description = "Print one row a family, as a Markdown table." };
+        var command = new Command("qualify", "Evaluate reference vectors with the prediction engine and compare with what is expected.") { files, json, table };
+        command.SetAction(result => Run(result.GetRequiredValue(files), Form(result.GetValue(json), result.GetValue(table)), result.InvocationConfiguration.Output, result.InvocationConfiguration.Error));
         return command;
     }
 
-    private static int Run(IReadOnlyList<FileInfo> files, bool asJson, TextWriter output, TextWriter error)
+    private static int Run(IReadOnlyList<FileInfo> files, OutputForm form, TextWriter output, TextWriter error)
     {
         var reports = new List<(string File, QualificationReport Report)>();
         foreach (var file in files)
@@ -36,14 +37,32 @@ internal static class QualifyCommand
             }
         }
 
-        if (asJson)
-            output.WriteLine(ToJson(reports).ToJsonString(Readable));
-        else
-            WriteText(reports, output);
+        switch (form)
+        {
+            case OutputForm.Json:
+                output.WriteLine(ToJson(reports).ToJsonString(Readable));
+                break;
+            case OutputForm.Table:
+                WriteTable(reports, output);
+                break;
+            default:
+                WriteText(reports, output);
+                break;
+        }
+
         return reports.Exists(r => !r.Report.IsBuilt) ? ExitCodes.Usage
             : reports.TrueForAll(r => r.Report.Passed) ? ExitCodes.Good
             : ExitCodes.Bad;
     }
+
+    private enum OutputForm
+    {
+        Text,
+        Json,
+        Table,
+    }
+
+    private static OutputForm Form(bool json, bool table) => json ? OutputForm.Json : table ? OutputForm.Table : OutputForm.Text;
 
     private static JsonObject ToJson(List<(string File, QualificationReport Report)> reports) => new()
     {
@@ -104,6 +123,22 @@ internal static class QualifyCommand
             var worst = judged.Select(q => q.Deviation ?? 0).DefaultIfEmpty(0).Max();
             output.WriteLine(
                 $"  {report.Cases.Count} cases, {judged.Count(q => q.Verdict is QuantityVerdict.Within)} quantities within tolerance, {judged.Count(q => q.Verdict is QuantityVerdict.Outside)} outside, {report.Cases.Count(c => c.Error is not null)} cases not computed, largest deviation {Text(worst)}");
+        }
+    }
+
+    private static void WriteTable(List<(string File, QualificationReport Report)> reports, TextWriter output)
+    {
+        output.WriteLine("| family | cases | numbers | largest deviation | largest share of its tolerance | outside |");
+        output.WriteLine("| --- | --- | --- | --- | --- | --- |");
+        foreach (var report in reports.Select(r => r.Report))
+        {
+            var judged = report.Cases.SelectMany(c => c.Quantities).Where(q => q.Verdict is not QuantityVerdict.Asked).ToList();
+            var outside = judged.Count(q => q.Verdict is QuantityVerdict.Outside) + report.Cases.Count(c => c.Error is not null);
+            var deviation = judged.Select(q => q.Deviation ?? 0).DefaultIfEmpty(0).Max();
+            var share = judged.Select(q => q.Deviation / q.Tolerance ?? 0).DefaultIfEmpty(0).Max();
+            output.WriteLine(string.Create(
+                System.Globalization.CultureInfo.InvariantCulture,
+                $"| {report.Family} | {report.Cases.Count} | {judged.Sum(q => q.Computed.Count)} | {deviation:0.0e+0} | {share:0.0 %} | {(report.IsBuilt ? outside : "not built")} |"));
         }
     }
 

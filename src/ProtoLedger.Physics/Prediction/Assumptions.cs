@@ -1,5 +1,6 @@
 using ProtoLedger.Physics.Acquisition;
 using ProtoLedger.Physics.PulsePrograms;
+using ProtoLedger.Physics.Pulses;
 
 namespace ProtoLedger.Physics.Prediction;
 
@@ -41,6 +42,11 @@ internal static class Assumptions
             yield return inversion.Pulse is EfficiencyInversion efficiency
                 ? new("inversionPulse", $"Inversion pulse '{efficiency.Name}': M becomes −{efficiency.Efficiency} M, whatever B1+ and off-resonance are.")
                 : new("inversionPulse", $"Inversion pulse '{inversion.Pulse.Name}' is {(setting.Pulses == PulseModelling.Ideal ? "an ideal rotation where it has a flip angle" : "integrated over B1+ and off-resonance")}.");
+            if (InversionSlab.Of(inversion, series.Readout) is not null)
+                yield return new(
+                    "selectiveSlab",
+                    $"The inverted slab is {inversion.SlabThickness} slice thicknesses thick, under a gradient of the polarity of the slice's; "
+                    + "the slice is assumed to be selected by windowed sinc pulses of 2.56 ms and time-bandwidth product 4.");
             yield return inversion.End switch
             {
                 InversionTimeEnd.KSpaceCentre => new("inversionTimeEnd", "The inversion time ends at the excitation that fills the centre of k-space."),

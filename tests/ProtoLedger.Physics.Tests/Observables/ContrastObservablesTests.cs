@@ -27,6 +27,15 @@ public sealed class ContrastObservablesTests
         Assert.False(ResidualRatio.Between(0.02, 0.2, 0.1, 0.2).ReferenceMoved);
     }
 
+    /// <summary>Inverted fluid and upright brain in one voxel cancel: the magnitude is that of the signed sum, not the sum of magnitudes.</summary>
+    [Fact]
+    public void PartialVolume_MixesSignedSignals()
+    {
+        Approximately.Absolute(0, PartialVolume.Mix([0.25, 0.75], [-0.3, 0.1]), 1e-15);
+        Assert.Contains("add up to 0.75", Assert.Throws<ArgumentException>(() => PartialVolume.Mix([0.25, 0.5], [1, 1])).Message, StringComparison.Ordinal);
+        Assert.Contains("Fraction 1 is -0.2", Assert.Throws<ArgumentException>(() => PartialVolume.Mix([1, -0.2], [1, 1])).Message, StringComparison.Ordinal);
+    }
+
     /// <summary>|1 − 2 exp(−TI/T1)| ≤ limit lies between T1 ln(2/(1 + limit)) and T1 ln(2/(1 − limit)) (closed form).</summary>
     [Fact]
     public void NullWindow_OfAPerfectInversion_MeetsTheClosedForm()

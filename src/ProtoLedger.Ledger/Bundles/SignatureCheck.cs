@@ -5,7 +5,7 @@ namespace ProtoLedger.Ledger.Bundles;
 
 /// <summary>
 /// Each signature folder belongs to a leaf that holds the hashes of its manifest, signature file and certificate; the
-/// signature is good for that leaf's subject and actor, and names a state of this very log that precedes the leaf.
+/// signature is that leaf's actor's, names a state of this very log that precedes the leaf, and no other leaf records it.
 /// </summary>
 internal sealed class SignatureCheck
 {
@@ -42,6 +42,8 @@ internal sealed class SignatureCheck
         {
             check.CheckFolder(index, names);
         }
+
+        check.CheckReplays();
 
         var missing = ledger.SignatureLeaves.Keys.Count(i => !folders.ContainsKey(i));
         if (missing > 0)
@@ -114,12 +116,26 @@ internal sealed class SignatureCheck
             files[BundleNames.InSignature(index, BundleNames.Manifest)].Span, files[BundleNames.InSignature(index, BundleNames.SignatureFile)].Span, pinned);
         if (verdict is SignatureVerdict.Good(var manifest, _))
         {
-            verdict = manifest.BoundElsewhere(leaf.Subject, leaf.Actor, manifest.Role, manifest.Meaning, ledger.Checkpoint.Origin) ?? verdict;
+            verdict = manifest.BoundElsewhere(manifest.Subject, leaf.Actor, manifest.Role, manifest.Meaning, ledger.Checkpoint.Origin) ?? verdict;
             CheckPlace(index, leaf, manifest);
             CheckArtefacts(index, names, manifest);
         }
 
         findings.Signature(index, verdict);
+    }
+
+    /// <summary>A signature counts once: a second leaf with the same file would be a replay.</summary>
+    private void CheckReplays()
+    {
+        var first = new Dictionary<Digest, long>();
+        foreach (var (index, leaf) in ledger.SignatureLeaves.OrderBy(l => l.Key))
+        {
+            if (!first.TryAdd(leaf.Blobs[BundleNames.SignatureFile], index))
+            {
+                findings.Wrong(BundlePart.Leaf, BundleNames.Leaves,
+                    $"leaf {index} records the signature of leaf {first[leaf.Blobs[BundleNames.SignatureFile]]} a second time");
+            }
+        }
     }
 
     private bool IsPinned(long index, LedgerLeaf leaf, string name)

@@ -98,6 +98,9 @@ public sealed class IndependentVerifierTests : IDisposable
 
         var old = made.Site.Authority.IssueRevocationList([], 1, TestSite.Signing.AddDays(-1), TestSite.Signing.AddDays(9));
         yield return ("revocation-list-too-old", made.ToBytes(made.Contents() with { RevocationList = old }), trust, null);
+        using var again = new TestBundle(made.Site, made.Log);
+        again.RecordAgain(4, "t.okafor");
+        yield return ("signature-recorded-twice", again.ToBytes(), trust, null);
         made.Leaves[1] = (LedgerLeaf.Parse(made.Leaves[1]).Require() with { Actor = "somebody.else" }).ToBytes();
         yield return ("history-rewritten-before-signatures", made.ToBytes(), trust, null);
     }

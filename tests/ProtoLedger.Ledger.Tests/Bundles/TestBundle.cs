@@ -81,6 +81,19 @@ internal sealed class TestBundle : IDisposable
     public void Append(string type, string actor, string subject, Dictionary<string, Digest> blobs) =>
         leaves.Add(new LedgerLeaf(type, 1, TestSite.Signing.AddSeconds(leaves.Count), actor, subject, blobs).ToBytes());
 
+    /// <summary>Records the signature of a leaf a second time, under another subject.</summary>
+    public void RecordAgain(int leaf, string actor)
+    {
+        var first = LedgerLeaf.Parse(leaves[leaf]).Require();
+        var rezip = new Rezip(ToBytes());
+        var index = leaves.Count;
+        Append(first.Type, actor, "change-request/99/signatures/1", first.Blobs.ToDictionary());
+        foreach (var name in rezip.Names.Where(n => n.StartsWith($"signatures/{leaf}/", StringComparison.Ordinal)))
+        {
+            entries.Add(BundleEntry.Of(BundleNames.InSignature(index, name.Split('/')[2]), rezip[name]));
+        }
+    }
+
     private void Sign(TestSite.Signer signer, string subject)
     {
         var index = leaves.Count;
@@ -90,7 +103,7 @@ internal sealed class TestBundle : IDisposable
             Checkpoint = new Checkpoint(Origin, index - 1, RootAt(index - 1)),
         };
         var (bytes, cms) = (manifest.ToBytes(), signer.Key.Sign(manifest, signer.Certificate));
-        Append("change-request-signed", signer.Certificate.Subject.Account, subject, new()
+        Append("signature-given", signer.Certificate.Subject.Account, $"{subject}/signatures/1", new()
         {
             [BundleNames.Manifest] = Digest.Of(bytes),
             [BundleNames.SignatureFile] = Digest.Of(cms),

@@ -20,6 +20,9 @@ internal static class ExpectationFindings
             var old = evidence.OldOutcome(outcome.Expectation.Id);
             var transition = VerdictRule.Between(old?.Verdict, outcome.Verdict);
             var moved = old is not null && RunDifference.HasMoved(old.Nominal, outcome.Nominal);
+            // What holds on and belongs to the series as a whole stands in the balance.
+            if (outcome.Expectation.Observable.Tissue is null && transition == Transition.StillHolds)
+                continue;
             if (old is null || !double.IsFinite(outcome.Nominal) || !double.IsFinite(old.Nominal) || !Tells(transition, moved, old.Nominal, outcome.Nominal))
                 continue;
             findings.Add(Tell(evidence, series, old, outcome, transition));

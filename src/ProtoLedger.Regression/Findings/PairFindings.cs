@@ -32,7 +32,8 @@ internal static class PairFindings
         && series.Acquisition.Preparations.Count > 0
         && (TissueRoles.IsFluid(tissue) || evidence.Edit.After.Catalogue.Document.Tissues.Any(t => t.Name == tissue && t.IsFat));
 
-    internal static string Verb(string subject, string plural) => subject.Contains(" and ", StringComparison.Ordinal) ? plural : plural + "s";
+    internal static string Verb(string subject, string plural) =>
+        subject.Contains(" and ", StringComparison.Ordinal) || (subject.EndsWith('s') && !subject.EndsWith("ss", StringComparison.Ordinal)) ? plural : plural + "s";
 
     /// <summary>"ventricles and sulci turn from black to about as bright as white matter, 0.05 to 1.0".</summary>
     internal static string Turns(string subject, string reference, double old, double now)
@@ -97,7 +98,11 @@ internal static class PairFindings
         if (Math.Abs(Math.Log(now)) < 0.05)
             return $"{subject} and {reference} can hardly be told apart any more, {numbers}";
         if ((old > 1) != (now > 1))
-            return $"{subject} {Verb(subject, "turn")} from {(old > 1 ? "brighter" : "darker")} to {(now > 1 ? "brighter" : "darker")} than {reference}, {numbers}";
+        {
+            var was = Math.Abs(Math.Log(old)) < 0.05 ? $"about as bright as {reference}" : $"{(old > 1 ? "brighter" : "darker")} than {reference}";
+            return $"{subject} {Verb(subject, "turn")} from {was} to {(now > 1 ? "brighter" : "darker")}, {numbers}";
+        }
+
         return $"{subject} and {reference} are told apart {(Math.Abs(Math.Log(now)) < Math.Abs(Math.Log(old)) ? "less" : "better")}, {numbers}";
     }
 

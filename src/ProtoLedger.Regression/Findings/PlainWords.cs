@@ -20,6 +20,9 @@ public static class PlainWords
         {
             ("csf", "brain" or "pituitary" or "head") => "ventricles and sulci",
             ("synovial-fluid", _) => "joint fluid",
+            ("grey-matter", _) => "grey matter",
+            ("lesion", _) => "lesions",
+            ("fat", _) => "fat",
             _ => catalogue.Tissues.FirstOrDefault(t => t.Name == tissue)?.Title is { } title ? Lower(title) : tissue,
         };
     }

@@ -44,8 +44,8 @@ public sealed class ChangeAssessorTests
         Assert.DoesNotContain(assessment.Scanners.SelectMany(s => s.Findings), f => f.Transition == Transition.NewlyFails && f.ExpectationId == "fluid-dark");
         var sentences = assessment.Scanners.Single(s => s.ScannerId == "three").Findings.Select(f => f.Sentence).ToArray();
         Assert.Contains(sentences, s => s.StartsWith("white matter gives less signal", StringComparison.Ordinal));
-        Assert.Contains(sentences, s => s.StartsWith("grey matter turns from brighter to darker than white matter", StringComparison.Ordinal));
-        Assert.Contains(sentences, s => s.StartsWith("lesion and white matter are told apart less", StringComparison.Ordinal));
+        Assert.Contains(sentences, s => s.StartsWith("grey matter turns from about as bright as white matter to darker", StringComparison.Ordinal));
+        Assert.Contains(sentences, s => s.StartsWith("lesions and white matter are told apart less", StringComparison.Ordinal));
     }
 
     [Fact]

@@ -95,7 +95,7 @@ internal sealed partial class ReportAssembly
         {
             var signals = part.After.Observables
                 .Where(key => key is { Observable: "signedSignal", Condition: ObservableKey.NominalCondition } && key.Series == id)
-                .Select(key => Signal(one, part.Before, part.After, key))
+                .Select(key => Signal(one, part, key))
                 .OfType<TissueSignal>()
                 .ToList();
             if (signals.Count == 0 || SeriesOf(Edit(one, part.ScannerId).After, id) is not { } series)
@@ -107,10 +107,14 @@ internal sealed partial class ReportAssembly
         }
     }
 
-    private static TissueSignal? Signal(AssessedProtocol one, EvaluationResult before, EvaluationResult after, ObservableKey key) =>
-        At(before, key) is { } old && At(after, key) is { } now
-            ? new TissueSignal(key.Tissue!, Words(one, key.Tissue)!, old, now, old, now, 0)
-            : null;
+    private TissueSignal? Signal(AssessedProtocol one, ScannerAssessment part, ObservableKey key)
+    {
+        if (At(part.Before, key) is not { } old || At(part.After, key) is not { } now)
+            return null;
+        var edit = Edit(one, part.ScannerId);
+        return new TissueSignal(
+            key.Tissue!, Words(one, key.Tissue)!, old, now, OffResonant(edit.Before, key) ?? old, OffResonant(edit.After, key) ?? now, B1Slope(edit.After, key));
+    }
 
     private static double Noise(EvaluationResult result, string series) =>
         Named(result, series, "relativeNoise") is { } noise and > 0 ? Math.Min(noise, 5) : 1;

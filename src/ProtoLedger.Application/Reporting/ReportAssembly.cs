@@ -30,7 +30,7 @@ internal sealed partial class ReportAssembly(
         [.. assessed.SelectMany(AttributionsOf)],
         [.. assessed.SelectMany(VerdictsOf)],
         [.. assessed.SelectMany(RecoveryOf)],
-        [],
+        [.. assessed.SelectMany(MapsOf)],
         [.. assessed.SelectMany(RepairsOf)],
         new ReportRun(run.Versions, run.Proposals, run.Results, run.Shared, run.Moved, run.NewlyFailing, run.NewlyHolding, run.FailedShards),
         [.. findings.Moved.Select(Touched).OfType<TouchedVersion>()],

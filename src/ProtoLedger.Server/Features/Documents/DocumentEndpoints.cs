@@ -40,11 +40,11 @@ internal static class DocumentEndpoints
             .WithName($"List{name}Versions").WithSummary("All versions, oldest first").Refuses(Problems.Missing);
         group.MapGet("/{id}", (HttpContext context, Caller caller, ReadDocuments useCase, string id, string? format, CancellationToken cancellationToken) =>
                 VersionAsync(context, caller, useCase, new DocumentKey(kind, id), null, format, cancellationToken))
-            .WithName($"Get{name}").WithSummary("The newest version with its document; format=yaml gives the document alone")
+            .WithName($"Get{name}").WithSummary("The newest version with its document; format=yaml gives the document alone, format=canonical its bytes as they are hashed and signed")
             .Produces<VersionResponse>().Refuses(Problems.MalformedRequest, Problems.Missing);
         group.MapGet("/{id}/versions/{version:int}", (HttpContext context, Caller caller, ReadDocuments useCase, string id, int version, string? format, CancellationToken cancellationToken) =>
                 VersionAsync(context, caller, useCase, new DocumentKey(kind, id), version, format, cancellationToken))
-            .WithName($"Get{name}Version").WithSummary("A version with its document; format=yaml gives the document alone")
+            .WithName($"Get{name}Version").WithSummary("A version with its document; format=yaml gives the document alone, format=canonical its bytes as they are hashed and signed")
             .Produces<VersionResponse>().Refuses(Problems.MalformedRequest, Problems.Missing);
         group.MapGet("/{id}/versions/{version:int}/provenance", (Caller caller, ReadDocuments useCase, string id, int version, string? pointer, CancellationToken cancellationToken) =>
                 ProvenanceAsync(caller, useCase, new DocumentKey(kind, id), version, pointer, cancellationToken))
@@ -75,15 +75,18 @@ internal static class DocumentEndpoints
         HttpContext context, Caller caller, ReadDocuments useCase, DocumentKey key, int? version, string? format, CancellationToken cancellationToken)
     {
         var query = new Query();
-        query.OneOf("format", format, ["json", "yaml"], word => (bool?)(word == "yaml"));
+        var form = query.OneOf("format", format, ["json", "yaml", "canonical"], word => (DocumentForm?)Enum.Parse<DocumentForm>(word, ignoreCase: true));
         query.Demand();
         var found = await useCase.VersionAsync(caller, key, version, cancellationToken);
         if (!found.Succeeded)
             return Problems.From(found.Refusal);
         context.Response.Headers.ETag = $"\"{found.Value.Summary.Sha256}\"";
-        return format == "yaml"
-            ? TypedResults.Text(YamlExport.Write(found.Value.Bytes), "application/yaml; charset=utf-8")
-            : TypedResults.Ok(new VersionResponse(found.Value.Summary, JsonElement.Parse(found.Value.Bytes)));
+        return form switch
+        {
+            DocumentForm.Yaml => TypedResults.Text(YamlExport.Write(found.Value.Bytes), "application/yaml; charset=utf-8"),
+            DocumentForm.Canonical => TypedResults.Bytes(found.Value.Bytes, "application/json"),
+            _ => TypedResults.Ok(new VersionResponse(found.Value.Summary, JsonElement.Parse(found.Value.Bytes))),
+        };
     }
 
     private static async Task<Results<Ok<ParameterProvenance>, Problem>> ProvenanceAsync(
@@ -107,6 +110,14 @@ internal static class DocumentEndpoints
         query.Demand();
         return (await useCase.EffectiveAsync(caller, protocol, scanner, time, cancellationToken)).ToOk();
     }
+}
+
+/// <summary>How a version is returned: with what is known about it, as YAML, or as the bytes that were hashed.</summary>
+internal enum DocumentForm
+{
+    Json,
+    Yaml,
+    Canonical,
 }
 
 /// <summary>A version with its document.</summary>

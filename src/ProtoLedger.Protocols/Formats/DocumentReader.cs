@@ -64,13 +64,13 @@ public static class DocumentReader
     /// <param name="expected">Kind that the document must have, or null for any.</param>
     public static ParseResult ReadTree(JsonNode? tree, DocumentKind? expected = null)
     {
-        if (tree is not JsonObject members)
-            return new ParseResult.Refused([new DocumentError("", ShownValue.Of(tree), null, "A document is a mapping of keys to values.")]);
-        if (KindOf(members, expected, out var kind) is { } fault)
-            return new ParseResult.Refused([fault]);
         try
         {
-            var bytes = CanonicalJson.Serialize(members);
+            var bytes = CanonicalJson.Serialize(tree);
+            if (tree is not JsonObject members)
+                return new ParseResult.Refused([new DocumentError("", ShownValue.Of(tree), null, "A document is a mapping of keys to values.")]);
+            if (KindOf(members, expected, out var kind) is { } fault)
+                return new ParseResult.Refused([fault]);
             var errors = ShapeCheck.Run(members, DocumentShapes.Of(kind));
             if (errors.Count > 0)
                 return new ParseResult.Refused(errors);

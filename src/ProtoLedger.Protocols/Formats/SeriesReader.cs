@@ -18,12 +18,21 @@ public static class SeriesReader
     /// <param name="json">The series.</param>
     /// <param name="scanner">Scanner whose pulses may be named, or null for the built-in ones alone.</param>
     /// <param name="pointer">Where the series stands in the request, such as <c>/series</c>; begins the pointer of every error.</param>
-    public static MappingResult<Series> Read(JsonElement json, ScannerDocument? scanner = null, string pointer = "")
+    public static MappingResult<Series> Read(JsonElement json, ScannerDocument? scanner = null, string pointer = "") =>
+        Guard(() => json.ValueKind == JsonValueKind.Undefined ? null : StrictJson.Parse(Encoding.UTF8.GetBytes(json.GetRawText())), scanner, pointer);
+
+    /// <summary>Reads and checks a series given as a tree.</summary>
+    /// <param name="tree">The series.</param>
+    /// <param name="scanner">Scanner whose pulses may be named, or null for the built-in ones alone.</param>
+    /// <param name="pointer">Begins the pointer of every error.</param>
+    public static MappingResult<Series> Read(JsonNode? tree, ScannerDocument? scanner, string pointer) =>
+        Guard(() => StrictJson.Parse(CanonicalJson.Serialize(tree)), scanner, pointer);
+
+    private static MappingResult<Series> Guard(Func<JsonNode?> read, ScannerDocument? scanner, string pointer)
     {
         try
         {
-            var tree = json.ValueKind == JsonValueKind.Undefined ? null : StrictJson.Parse(Encoding.UTF8.GetBytes(json.GetRawText()));
-            return Read(tree, scanner, pointer);
+            return ReadStrict(read(), scanner, pointer);
         }
         catch (CanonicalJsonException fault)
         {
@@ -31,11 +40,7 @@ public static class SeriesReader
         }
     }
 
-    /// <summary>Reads and checks a series given as a tree.</summary>
-    /// <param name="tree">The series.</param>
-    /// <param name="scanner">Scanner whose pulses may be named, or null for the built-in ones alone.</param>
-    /// <param name="pointer">Begins the pointer of every error.</param>
-    public static MappingResult<Series> Read(JsonNode? tree, ScannerDocument? scanner, string pointer)
+    private static MappingResult<Series> ReadStrict(JsonNode? tree, ScannerDocument? scanner, string pointer)
     {
         var errors = ShapeCheck.Run(tree, SeriesShapes.Bare, pointer);
         if (errors.Count > 0)

@@ -18,10 +18,15 @@ internal static class PreparationValidation
             switch (series.Preparations[i])
             {
                 case Inversion block:
+                    PulseValidation.Check(block.Pulse, place + "/pulse", null, errors);
                     CheckRoom(series, times, i, block.InversionTime, Half(block.Pulse), place, errors);
                     break;
                 case SpectralInversion block:
+                    PulseValidation.Check(block.Pulse, place + "/pulse", null, errors);
                     CheckRoom(series, times, i, block.InversionTime, Half(block.Pulse), place, errors);
+                    break;
+                case SpectralSaturation block:
+                    PulseValidation.Check(block.Pulse, place + "/pulse", null, errors);
                     break;
             }
         }

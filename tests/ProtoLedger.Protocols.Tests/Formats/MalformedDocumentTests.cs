@@ -89,6 +89,8 @@ public sealed class MalformedDocumentTests
         { "off-resonance the wrong way round", Conditions, "offResonance: {low: -60, high: 60}", "offResonance: {low: 60, high: -60}", "/conditions/0/offResonance/high", "below its low end" },
         { "pulse beyond the scanner", Scanner, "peakB1: 800", "peakB1: 1000", "/pulses/hyperbolic-secant/peakB1", "higher peak B1" },
         { "samples without their phases", Scanner, "phase: [0, 90]", "phase: [0]", "/pulses/sampled/phase", "as many phases" },
+        { "hard pulse beyond the scanner", Scanner, "{kind: sampled, duration: 2, amplitude: [100, 200], phase: [0, 90]}", "{kind: hard, flipAngle: 180, duration: 0.5}", "/pulses/sampled/duration", "higher peak B1" },
+        { "inline samples without their phases", Protocol, "pulse: adiabatic", "pulse: {kind: sampled, duration: 2, amplitude: [100, 200], phase: [0]}", "/series/0/preparations/0/pulse/phase", "as many phases" },
         { "ratio without a reference", Expectations, ", reference: white-matter", "", "/expectations/0/observable/reference", "none is named" },
         { "tissue against itself", Expectations, "reference: white-matter", "reference: csf", "/expectations/0/observable/reference", "with itself" },
         { "signal of no tissue", Expectations, "name: residualRatio, tissue: csf, reference: white-matter", "name: signal", "/expectations/0/observable/tissue", "none is named" },

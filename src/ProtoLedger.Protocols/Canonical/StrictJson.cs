@@ -103,7 +103,7 @@ internal static class StrictJson
     private static string Describe(JsonException fault)
     {
         var place = $"line {fault.LineNumber + 1}, byte {fault.BytePositionInLine + 1}";
-        return fault.Message.Contains("depth", StringComparison.OrdinalIgnoreCase)
+        return fault.Message.Contains("maximum configured depth", StringComparison.OrdinalIgnoreCase)
             ? $"Nested deeper than {CanonicalJson.MaximumDepth} levels ({place})."
             : $"Not JSON: {place}.";
     }

@@ -33,6 +33,8 @@ internal sealed class FirstStart(PrepareSite site, ImportStore import, DemoPeopl
             await Console.Out.WriteLineAsync($"imported {imported.Value.Versions} versions and {imported.Value.Proposals} closed proposals from {Store}");
         else if (imported.Refusal is not Conflict)
             throw new StartupException(Describe(imported.Refusal));
+        if (!options.ServesWeb)
+            return [];
         return options.Demo ?? database.Cluster is not null
             ? await demo.PrepareAsync(Store, cancellationToken)
             : ["people sign in with accounts of this site; the first administrator is made with: protoledger add-administrator NAME"];

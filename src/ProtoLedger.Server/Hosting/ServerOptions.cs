@@ -17,18 +17,18 @@ internal sealed class ServerOptions
     public string Role { get; set; } = "all";
 
     /// <summary>Folder whose documents are imported into an empty database; null for the one that comes with the program.</summary>
-    public string? Store { get; set; }
+    public string? Store { get; set => field = Filled(value); }
 
     /// <summary>Whether demo people are made; null means only on the private cluster.</summary>
     public bool? Demo { get; set; }
 
     /// <summary>Password of every demo person; null means random.</summary>
     [MinLength(1)]
-    public string? DemoPassword { get; set; }
+    public string? DemoPassword { get; set => field = Filled(value); }
 
     /// <summary>Signing passphrase of every demo signer; null means "sign " and the demo password, or random.</summary>
     [MinLength(1)]
-    public string? DemoSigningPassphrase { get; set; }
+    public string? DemoSigningPassphrase { get; set => field = Filled(value); }
 
     /// <summary>Name of the site, as its certificates show it.</summary>
     [Required]
@@ -41,13 +41,16 @@ internal sealed class ServerOptions
     public string Origin { get; set; } = "protoledger.invalid/ledger";
 
     /// <summary>File of the key under which the site's own private keys are sealed; null for sealing.key in the data folder.</summary>
-    public string? SealingKeyFile { get; set; }
+    public string? SealingKeyFile { get; set => field = Filled(value); }
 
     /// <summary>Workers in this process.</summary>
     [Range(1, 64)]
-    public int Workers { get; set; } = Math.Max(1, Environment.ProcessorCount - 1);
+    public int Workers { get; set; } = Environment.ProcessorCount;
 
     public bool ServesWeb => Role is "web" or "all";
 
     public bool Works => Role is "worker" or "all";
+
+    /// <summary>An empty setting, as compose files make them, says nothing.</summary>
+    private static string? Filled(string? value) => string.IsNullOrEmpty(value) ? null : value;
 }

@@ -30,8 +30,15 @@ internal static class JsonShape
             return;
         }
 
-        if (shape.Type == typeof(JsonElement) || typeof(JsonNode).IsAssignableFrom(shape.Type))
+        if (shape.Type == typeof(JsonElement))
             return;
+        if (shape.Type == typeof(JsonObject))
+        {
+            if (node is not JsonObject)
+                context.Add(pointer, node, "an object", "An object is needed here.");
+            return;
+        }
+
         switch (shape.Kind)
         {
             case JsonTypeInfoKind.Object:

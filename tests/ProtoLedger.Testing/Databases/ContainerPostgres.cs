@@ -1,4 +1,5 @@
 using System.Diagnostics;
+using Microsoft.Extensions.Logging.Abstractions;
 using Testcontainers.PostgreSql;
 
 namespace ProtoLedger.Testing.Databases;
@@ -34,6 +35,7 @@ internal sealed class ContainerPostgres : PostgresForTests
         var container = new PostgreSqlBuilder(Image)
             .WithCommand("-c", "fsync=off", "-c", "synchronous_commit=off", "-c", "full_page_writes=off", "-c", "max_connections=200")
             .WithAutoRemove(true)
+            .WithLogger(NullLogger.Instance)
             .Build();
         try
         {

@@ -48,6 +48,8 @@ public static class ChangeAssessor
             findings.AddRange(PairFindings.Of(evidence, series, pairs));
             findings.AddRange(CostFindings.Findings(evidence, series));
             balance.AddRange(CostFindings.Balance(evidence, series));
+            findings.AddRange(InversionReach.Findings(evidence, series));
+            balance.AddRange(InversionReach.Balance(evidence, series));
         }
 
         findings.AddRange(SeriesFindings.Of(evidence));

@@ -173,10 +173,10 @@ internal static class Documents
             var other => throw new InvalidOperationException(other.GetType().Name),
         };
 
-    internal static EvaluationInput Input(string scanner = Three, string protocol = Brain, string? expectations = Expectations, string catalogue = Catalogue) => new(
+    internal static EvaluationInput Input(string scanner = Three, string protocol = Brain, string? expectations = Expectations, string catalogue = Catalogue, string conditions = Conditions) => new(
         Read<ProtocolDocument>(protocol),
         Read<ScannerDocument>(scanner),
-        Read<ConditionsDocument>(Conditions),
+        Read<ConditionsDocument>(conditions),
         Read<CatalogueDocument>(catalogue),
         expectations is null ? null : Read<ExpectationsDocument>(expectations),
         SamplePlan.Default);

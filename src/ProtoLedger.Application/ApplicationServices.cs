@@ -1,6 +1,7 @@
 using Microsoft.Extensions.DependencyInjection;
 using ProtoLedger.Application.Accounts;
 using ProtoLedger.Application.Actors;
+using ProtoLedger.Application.Bundles;
 using ProtoLedger.Application.ChangeRequests;
 using ProtoLedger.Application.Commanding;
 using ProtoLedger.Application.Documents;
@@ -34,8 +35,8 @@ public static class ApplicationServices
         typeof(Commands), typeof(SiteKeys), typeof(LedgerWriter), typeof(DocumentShelf), typeof(Passwords), typeof(SecondFactor), typeof(SigningKeys),
         typeof(CreateChangeRequest), typeof(EditChangeRequest), typeof(SubmitChangeRequest), typeof(WithdrawChangeRequest),
         typeof(DeclineChangeRequest), typeof(ApproveChangeRequest), typeof(RebaseChangeRequest), typeof(MakeEffective),
-        typeof(ReadChangeRequests), typeof(AddComment), typeof(ReadDocuments), typeof(ReadRuns), typeof(EnqueueRun), typeof(ReadLedger), typeof(ReadAudit), typeof(PrepareSite),
-        typeof(PredictSeries), typeof(RecordDenial), typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
+        typeof(ReadChangeRequests), typeof(AddComment), typeof(ReadDocuments), typeof(ReadRuns), typeof(EnqueueRun), typeof(ReadLedger), typeof(ReadAudit), typeof(AuditLedger), typeof(RecordLoading), typeof(ExportBundle), typeof(PrepareSite),
+        typeof(PredictSeries), typeof(RecordDenial), typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(SetSecondFactor), typeof(KeepTokens), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
         typeof(ImportStore), typeof(PrepareDemo), typeof(RunWorker), typeof(ChangeReports), typeof(CompareRuns),
     ];
 }

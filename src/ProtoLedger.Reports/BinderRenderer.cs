@@ -56,11 +56,15 @@ public static class BinderRenderer
     {
         var links = pages.Select(p => p.Name == here
             ? $"<a href=\"{p.Name}\" aria-current=\"page\">{p.Title}</a>"
-            : $"<a href=\"{p.Name}\">{p.Title}</a>");
+            : $"<a href=\"{Path(here, p.Name)}\">{p.Title}</a>");
         if (here == pages[0].Name)
             links = links.Concat(binder.Files.Where(f => f.Name.EndsWith(".html", StringComparison.Ordinal)).Select(f => $"<a href=\"{Inside(f.Name)}\">{PageParts.Attribute(f.What)}</a>"));
         return $"<nav class=\"contents\" aria-label=\"Pages\">{string.Concat(links)}</nav>";
     }
+
+    /// <summary>The first page stands at the top of a bundle, the others below <c>pages/</c>.</summary>
+    private static string Path(string here, string there) =>
+        here == "index.html" ? "pages/" + there : there == "index.html" ? "../index.html" : there;
 
     private static string Inside(string name) =>
         name.Length > 0 && name[0] != '/' && !name.Contains("..", StringComparison.Ordinal) && name.All(c => char.IsAsciiLetterLower(c) || char.IsAsciiDigit(c) || c is '.' or '_' or '-' or '/')

@@ -30,11 +30,18 @@ public sealed record RoleRule(string Name, IReadOnlyList<string> AllowedRoles, b
     /// <summary>Those who say what runs where.</summary>
     public static RoleRule Release { get; } = new("release", [Roles.LeadTechnologist, Roles.Physicist], false, null);
 
+    /// <summary>Those who enter versions at a console and check them there.</summary>
+    public static RoleRule Load { get; } = new("load", [Roles.Technologist, Roles.LeadTechnologist, Roles.Physicist], false, null);
+
     /// <summary>Those who may start a regression run by hand.</summary>
     public static RoleRule StartRun { get; } = new("start a run", [Roles.Physicist, Roles.LeadTechnologist], false, Actors.Scope.Propose);
 
     /// <summary>Those who read the audit trail.</summary>
     public static RoleRule ReadAudit { get; } = new("read the audit trail", [Roles.Reviewer, Roles.Administrator, Roles.Physicist], false, Actors.Scope.Read);
+
+    /// <summary>Those who export bundles.</summary>
+    public static RoleRule Export { get; } = new(
+        "export", [Roles.Reviewer, Roles.Physicist, Roles.LeadTechnologist, Roles.Administrator], false, Actors.Scope.Read);
 
     /// <summary>Those who keep accounts.</summary>
     public static RoleRule KeepAccounts { get; } = new("keep accounts", [Roles.Administrator], false, null);

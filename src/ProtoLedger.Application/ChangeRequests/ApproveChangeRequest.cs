@@ -1,5 +1,3 @@
-using System.Security.Cryptography;
-using System.Text.Json.Nodes;
 using System.Text.Json.Serialization;
 using ProtoLedger.Application.Accounts;
 using ProtoLedger.Application.Actors;
@@ -100,6 +98,9 @@ public sealed class ApproveChangeRequest(Commands commands, DocumentShelf shelf,
         return (null, new Forbidden($"Change request {row.Id} needs {needed}; nothing of that is {actor.Name}'s to give now."));
     }
 
+    /// <summary>The signed record: the version that approval makes.</summary>
+    private static string Subject(ChangeRequestRow row) => VersionFacts.Subject(row.Key, row.BaseVersion + 1);
+
     private static string Words(RequiredSignature wanted) => wanted.Meaning.Replace('-', ' ');
 
     private static SignatureRow Sign(
@@ -108,7 +109,7 @@ public sealed class ApproveChangeRequest(Commands commands, DocumentShelf shelf,
         var meaning = SignatureMeanings.FromWords(Words(owed))
             ?? throw new InvalidOperationException($"'{owed.Meaning}' is no meaning of a signature.");
         var manifest = new SignatureManifest(
-            $"{row.Key.KindWord}/{row.Key.Id}/{row.BaseVersion + 1}",
+            Subject(row),
             key.Certificate.Subject,
             owed.Role,
             meaning,
@@ -132,7 +133,7 @@ public sealed class ApproveChangeRequest(Commands commands, DocumentShelf shelf,
     private async Task<Outcome<ChangeRequestView>> FinishAsync(
         Command command, ChangeRequestRow row, LedgerDocument document, ReportRow report, List<SignatureRow> counting, SigningCertificate certificate)
     {
-        var facts = new List<Fact> { SignatureFact(counting[^1], certificate) };
+        var facts = new List<Fact> { SignatureFacts.Of(counting[^1], Subject(row), certificate.ToDer()) };
         var complete = ChangeRequestViews.Required(document).All(
             wanted => counting.Exists(signature => signature.Role == wanted.Role && signature.Meaning == Words(wanted)));
         var kept = row;
@@ -162,23 +163,4 @@ public sealed class ApproveChangeRequest(Commands commands, DocumentShelf shelf,
             blobs.Add((name, (await command.Stores.Ledger.FindBlobAsync(hash, command.Cancellation))!));
         return [.. blobs];
     }
-
-    private static Fact SignatureFact(SignatureRow signature, SigningCertificate certificate) => new(
-        "signature-given",
-        $"{Proposals.Subject(signature.ChangeRequestId)}/signatures/{signature.Number}",
-        new JsonObject
-        {
-            ["changeRequest"] = signature.ChangeRequestId,
-            ["number"] = signature.Number,
-            ["round"] = signature.Round,
-            ["signer"] = signature.Signer,
-            ["signerName"] = signature.SignerName,
-            ["role"] = signature.Role,
-            ["meaning"] = signature.Meaning,
-            ["certificateSha256"] = Convert.ToHexStringLower(signature.CertificateSha256),
-            ["cmsSha256"] = Convert.ToHexStringLower(SHA256.HashData(signature.Cms)),
-        },
-        ("manifest.json", signature.Manifest),
-        ("approval.p7s", signature.Cms),
-        ("certificate", certificate.ToDer()));
 }

@@ -107,26 +107,30 @@ internal static class Proposals
     }
 
     /// <summary>A fact about a request.</summary>
-    public static Fact Fact(string type, ChangeRequestRow row) => new(
-        type,
-        Subject(row.Id),
-        new JsonObject
-        {
-            ["id"] = row.Id,
-            ["kind"] = row.Key.KindWord,
-            ["documentId"] = row.Key.Id,
-            ["baseVersion"] = row.BaseVersion,
-            ["sha256"] = Convert.ToHexStringLower(row.Sha256),
-            ["reason"] = row.Reason,
-            ["author"] = row.Author,
-            ["state"] = row.State.ToWord(),
-            ["round"] = row.Round,
-            ["decidedBy"] = row.DecidedBy ?? "",
-            ["decisionReason"] = row.DecisionReason ?? "",
-            ["version"] = row.Version ?? 0,
-            ["imported"] = row.Imported,
-        },
-        ("document", row.Bytes));
+    public static Fact Fact(string type, ChangeRequestRow row) => new(type, Subject(row.Id), Values(row), ("document", row.Bytes));
+
+    /// <summary>Every value of a request that is of record.</summary>
+    public static JsonObject Values(ChangeRequestRow row) => new()
+    {
+        ["id"] = row.Id,
+        ["kind"] = row.Key.KindWord,
+        ["documentId"] = row.Key.Id,
+        ["baseVersion"] = row.BaseVersion,
+        ["sha256"] = Convert.ToHexStringLower(row.Sha256),
+        ["reason"] = row.Reason,
+        ["author"] = row.Author,
+        ["authorName"] = row.AuthorName,
+        ["state"] = row.State.ToWord(),
+        ["round"] = row.Round,
+        ["createdAt"] = VersionFacts.Time(row.CreatedAt),
+        ["submittedAt"] = row.SubmittedAt is { } submitted ? VersionFacts.Time(submitted) : "",
+        ["decidedAt"] = row.DecidedAt is { } decided ? VersionFacts.Time(decided) : "",
+        ["decidedBy"] = row.DecidedBy ?? "",
+        ["decisionReason"] = row.DecisionReason ?? "",
+        ["version"] = row.Version ?? 0,
+        ["imported"] = row.Imported,
+        ["source"] = row.Source ?? "",
+    };
 
     /// <summary>How the ledger and signatures name a request.</summary>
     public static string Subject(long id) => $"change-request/{id}";

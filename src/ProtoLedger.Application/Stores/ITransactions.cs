@@ -42,6 +42,9 @@ public interface IStores
     /// <summary>Signing keys and certificates.</summary>
     IKeyStore Keys { get; }
 
+    /// <summary>Everything of record.</summary>
+    IRecordStore Records { get; }
+
     /// <summary>Audit events.</summary>
     IAuditStore Audit { get; }
 

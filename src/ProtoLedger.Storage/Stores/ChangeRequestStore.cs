@@ -81,7 +81,7 @@ internal sealed class ChangeRequestStore(Session session) : IChangeRequestStore
         row.RunId,
     };
 
-    private sealed class Row
+    internal sealed class Row
     {
         public long Id { get; init; }
 

@@ -20,6 +20,8 @@ internal sealed class PostgresStores(Session session) : IStores
 
     public IKeyStore Keys { get; } = new KeyStore(session);
 
+    public IRecordStore Records { get; } = new RecordStore(session);
+
     public IAuditStore Audit { get; } = new AuditStore(session);
 
     public IIdempotencyStore Idempotency { get; } = new IdempotencyStore(session);

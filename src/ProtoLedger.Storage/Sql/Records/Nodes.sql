@@ -1,0 +1,2 @@
+SELECT level, index, hash
+FROM ledger_node

@@ -11,7 +11,7 @@ internal static class NullObservables
 
     private const int WindowSteps = 96;
 
-    private const int Nodes = 16;
+    private const int Nodes = 7;
 
     /// <summary>Up to so many lanes the root finder itself is quick enough.</summary>
     private const int Few = 8;
@@ -64,7 +64,7 @@ internal static class NullObservables
     /// <summary>Null time of every lane, ms, NaN where there is none; the first lane by the engine's root finder, many lanes by interpolation on the engine's signals.</summary>
     /// <remarks>
     /// The signal after an inversion is nearly linear in u = exp(−TI/T1), so three nodes around the sign change give u at zero by Lagrange's inverse
-    /// interpolation to far below a millisecond. Lanes whose null lies outside the nodes go to the root finder.
+    /// interpolation to far below a millisecond, also somewhat beyond the nodes. Lanes without a null there go to the root finder.
     /// </remarks>
     internal static double[] Find(SeriesContext context, int index, LaneTable lanes)
     {
@@ -92,7 +92,7 @@ internal static class NullObservables
         var nodes = new List<(double Time, double[] Signed)>();
         for (var node = 0; node <= Nodes; node++)
         {
-            var time = around * (0.55 + 0.95 * node / Nodes);
+            var time = around * (0.55 + 0.9 * node / Nodes);
             try
             {
                 nodes.Add((time, SignalPredictor.Predict(WithInversionTime(context.Acquisition, index, time), context.Setting, lanes).Signed));
@@ -106,14 +106,14 @@ internal static class NullObservables
 
         for (var lane = 0; lane < nulls.Length && nodes.Count >= 3; lane++)
         {
-            for (var k = 1; k < nodes.Count; k++)
-            {
-                if (nodes[k - 1].Signed[lane] >= 0 || nodes[k].Signed[lane] < 0)
-                    continue;
-                var middle = Math.Clamp(k - (-nodes[k - 1].Signed[lane] < nodes[k].Signed[lane] ? 1 : 0), 1, nodes.Count - 2);
-                nulls[lane] = AtZero(nodes, middle, lane, lanes.T1[lane]);
-                break;
-            }
+            // The nearest three nodes to the sign change; beyond the ends the near-linear curve is continued.
+            var above = 0;
+            while (above < nodes.Count && nodes[above].Signed[lane] < 0)
+                above++;
+            var nearer = above > 0 && above < nodes.Count && -nodes[above - 1].Signed[lane] < nodes[above].Signed[lane] ? above - 1 : above;
+            var time = AtZero(nodes, Math.Clamp(nearer, 1, nodes.Count - 2), lane, lanes.T1[lane]);
+            if (time > 0.3 * around && time < 2.5 * around)
+                nulls[lane] = time;
         }
     }
 

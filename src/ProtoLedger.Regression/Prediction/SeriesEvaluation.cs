@@ -25,7 +25,8 @@ internal static class SeriesEvaluation
         var draws = Enumerable.Range(-1, context.Draws.Count + 1).ToArray();
         var judges = expectations.Select(e => new ExpectationJudge(e, context)).ToArray();
         var standard = StandardObservables.Of(context, Tissues(expectations));
-        var computer = Compute(context, draws, [.. standard.Where(k => !IsSparse(k)).Select(Request)], judges);
+        var computer = Compute(context, draws, [.. standard.Where(k => !IsSlow(k) && !IsBlur(k)).Select(Request)], judges);
+        var few = Compute(context, [.. draws.Take(SlowDraws + 1)], [.. standard.Where(IsSlow).Select(Request)], []);
         var old = before is not null && judges.Any(j => j.Paired) ? Compute(before, draws, [], [.. judges.Where(j => j.Paired)]) : null;
 
         var numbers = new Dictionary<ObservableKey, PredictedNumber>();
@@ -39,7 +40,7 @@ internal static class SeriesEvaluation
         }
 
         foreach (var key in standard)
-            Add(key, IsSparse(key) ? Sparse(context, key) : computer.Read(Request(key)));
+            Add(key, IsBlur(key) ? Blur(context, key) : (IsSlow(key) ? few : computer).Read(Request(key)));
         foreach (var (key, values) in judges.SelectMany(j => j.Observables(computer)))
             Add(key, values);
 
@@ -51,6 +52,8 @@ internal static class SeriesEvaluation
             Assumptions(context, computer),
             [.. computer.Cells.Tissues.SelectMany(t => t.WeakSources()).Distinct()]);
     }
+
+    private const int SlowDraws = 128;
 
     /// <summary>Predicts requests and judges' requests in one batch.</summary>
     internal static ObservableComputer Compute(SeriesContext context, int[] draws, IReadOnlyList<ObservableRequest> requests, IReadOnlyList<ExpectationJudge> judges)
@@ -65,9 +68,12 @@ internal static class SeriesEvaluation
     internal static ObservableRequest Request(ObservableKey key) => new(key.Observable, key.Tissue, key.Reference, ConditionPoints.Nominal);
 
     /// <summary>The blur of a train is slow to compute and hardly varies: it is predicted at the means and at the 5 % and 95 % draws of T2.</summary>
-    private static bool IsSparse(ObservableKey key) => key.Observable == "blurWidth";
+    private static bool IsBlur(ObservableKey key) => key.Observable == "blurWidth";
 
-    private static ObservableValues Sparse(SeriesContext context, ObservableKey key)
+    /// <summary>Derivatives take eight predictions of every lane: their intervals rest on the first draws alone, which are a balanced set of their own.</summary>
+    private static bool IsSlow(ObservableKey key) => key.Observable.StartsWith("weighting", StringComparison.Ordinal) || key.Observable == "contrastEquivalentEchoTime";
+
+    private static ObservableValues Blur(SeriesContext context, ObservableKey key)
     {
         var all = new SignalCells(context, [.. Enumerable.Range(0, context.Draws.Count)]);
         if (all.Tissue(key.Tissue!).Because is { } because)

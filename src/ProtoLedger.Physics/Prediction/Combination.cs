@@ -9,16 +9,21 @@ namespace ProtoLedger.Physics.Prediction;
 internal static class Combination
 {
     internal static SignalTable Of(
-        Series series, PredictionSetting setting, CompiledSeries program, LaneTable lanes, PeakLanes peaks, PredictionRun run, PredictionRun? fresh, bool allEchoes)
+        Series series, PredictionSetting setting, CompiledSeries program, LaneTable lanes, PeakLanes peaks, PredictionRun run, PredictionRun? fresh, bool allEchoes,
+        SignalTable? reused)
     {
         var echoTimes = allEchoes ? program.EchoTimes : [];
-        var table = new SignalTable(lanes.Count, echoTimes, () => Assumptions.Of(series, setting, lanes, program));
-        Longitudinal(table, program, lanes, peaks, run, fresh);
-        if (IsPlain(program, peaks, fresh))
+        IReadOnlyList<Assumption> Assume() => Assumptions.Of(series, setting, lanes, program);
+        if (IsPlain(program, peaks, fresh is not null))
         {
-            Plain(table, lanes, run, echoTimes.Length);
-            return table;
+            var plain = reused ?? new SignalTable(run.Signed, run.Before, run.End, run.Period, echoTimes, Assume);
+            plain.Assume(Assume);
+            Plain(plain, lanes, run, echoTimes.Length);
+            return plain;
         }
+
+        var table = new SignalTable(lanes.Count, echoTimes, Assume);
+        Longitudinal(table, program, lanes, peaks, run, fresh);
 
         Signals(
             setting, program, lanes, peaks, fresh, program.EchoTimes[program.EffectiveEcho], run.Signed,
@@ -35,8 +40,9 @@ internal static class Combination
         return table;
     }
 
-    private static bool IsPlain(CompiledSeries program, PeakLanes peaks, PredictionRun? fresh) =>
-        peaks.Owner is null && fresh is null && program.Closure == Closure.Longitudinal && !(program.DiffusionBValue > 0);
+    /// <summary>Whether the engine's columns are those of the lanes but for the proton density.</summary>
+    internal static bool IsPlain(CompiledSeries program, PeakLanes peaks, bool fresh) =>
+        peaks.Owner is null && !fresh && program.Closure == Closure.Longitudinal && !(program.DiffusionBValue > 0);
 
     private static void Plain(SignalTable table, LaneTable lanes, PredictionRun run, int echoes)
     {

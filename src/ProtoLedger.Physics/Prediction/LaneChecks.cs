@@ -1,3 +1,4 @@
+using System.Runtime.Intrinsics;
 using ProtoLedger.Physics.PulsePrograms;
 
 namespace ProtoLedger.Physics.Prediction;
@@ -34,15 +35,17 @@ internal static class LaneChecks
 
     private static void Within(string name, double[] column, double low, double high, string unit, bool open)
     {
-        // One pass that finds nothing is the rule, so it only combines comparisons.
-        var good = true;
-        foreach (var value in column)
-            good &= value >= low & value <= high;
-        for (var i = 0; open && i < column.Length; i++)
-            good &= column[i] != low;
-        if (good)
-            return;
-        for (var i = 0; i < column.Length; i++)
+        // A pass that finds nothing is the rule: it takes several lanes at once and an open lower bound is the next number above it.
+        var lowest = open ? Math.BitIncrement(low) : low;
+        var checkedLanes = 0;
+        for (; checkedLanes <= column.Length - Vector512<double>.Count; checkedLanes += Vector512<double>.Count)
+        {
+            var values = Vector512.LoadUnsafe(ref column[checkedLanes]);
+            if (!Vector512.GreaterThanOrEqualAll(values, Vector512.Create(lowest)) || !Vector512.LessThanOrEqualAll(values, Vector512.Create(high)))
+                break;
+        }
+
+        for (var i = checkedLanes; i < column.Length; i++)
             if (!(column[i] >= low && column[i] <= high && (!open || column[i] > low)))
                 throw new ArgumentException($"{name}: {column[i]} {unit} in lane {i} must lie in {(open ? '(' : '[')}{low}, {high}].");
     }

@@ -16,14 +16,15 @@ internal sealed unsafe class PredictionRun
     private readonly StartState _start;
 
     internal PredictionRun(
-        Series series, CompiledSeries program, PredictionSetting setting, PeakLanes peaks, bool allEchoes, StartState start, LaneWidth width)
+        Series series, CompiledSeries program, PredictionSetting setting, PeakLanes peaks, bool allEchoes, StartState start, LaneWidth width,
+        SignalTable? reused = null)
     {
         (_series, _program, _setting, _peaks, _allEchoes, _start, _width) = (series, program, setting, peaks, allEchoes, start, width);
         var count = peaks.Lanes.Count;
-        Signed = new double[count];
-        Before = new double[count];
-        End = new double[count];
-        Period = new double[count];
+        Signed = reused?.Signed ?? new double[count];
+        Before = reused?.LongitudinalBeforeExcitation ?? new double[count];
+        End = reused?.LongitudinalAtEnd ?? new double[count];
+        Period = reused?.LongitudinalAtStart ?? new double[count];
         Samples = allEchoes ? new double[count * program.EchoTimes.Length] : [];
     }
 
@@ -49,7 +50,7 @@ internal sealed unsafe class PredictionRun
     {
         var lanes = _peaks.Lanes;
         var t2 = _program.DecaysWithT2Star && _program.Closure != Closure.RfSpoiled ? lanes.T2Star : lanes.T2;
-        var columns = new double[2 * _program.Maps.Count * lanes.Count];
+        double[] columns = _program.Maps.Count == 0 ? [] : new double[2 * _program.Maps.Count * lanes.Count];
         MapColumns.Fill(_program, _series.Readout, _setting, _peaks, columns);
         fixed (double* t1 = lanes.T1, transverse = t2, b1 = lanes.B1Scale, maps = columns)
         fixed (double* signed = Signed, before = Before, end = End, period = Period, samples = Samples)

@@ -21,9 +21,72 @@ public static class SignalPredictor
         Series series, PredictionSetting setting, LaneTable lanes, PredictionOutputs outputs = PredictionOutputs.EffectiveEcho) =>
         Compute(series, setting, lanes, outputs, pruned: true, LaneWidth.Machine);
 
-    /// <summary>The same with pruning and lane width chosen: for tests and for measuring.</summary>
+    /// <summary>Predicts the signal of every lane into a table that is used again: nothing of the size of the lanes is allocated for a plain series.</summary>
+    /// <param name="series">The series.</param>
+    /// <param name="setting">Field strength and treatment of pulses.</param>
+    /// <param name="lanes">The lanes.</param>
+    /// <param name="destination">A table of as many lanes without echoes; undefined after an exception.</param>
+    /// <exception cref="ArgumentException">As <see cref="Predict"/>, or the table has another number of lanes.</exception>
+    public static void PredictInto(Series series, PredictionSetting setting, LaneTable lanes, SignalTable destination)
+    {
+        ArgumentNullException.ThrowIfNull(destination);
+        ArgumentNullException.ThrowIfNull(lanes);
+        if (destination.Count != lanes.Count || destination.EchoTimes.Count > 0)
+            throw new ArgumentException($"destination: it has {destination.Count} lanes and {destination.EchoTimes.Count} echoes; {lanes.Count} lanes and no echoes are needed.", nameof(destination));
+        var result = Compute(series, setting, lanes, PredictionOutputs.EffectiveEcho, pruned: true, LaneWidth.Machine, destination);
+        if (!ReferenceEquals(result, destination))
+            destination.CopyFrom(result);
+    }
+
+    /// <summary>Predicts many series, on several threads.</summary>
+    /// <param name="requests">n predictions.</param>
+    /// <param name="threads">Most threads at once, ≥ 1; the results do not depend on it.</param>
+    /// <returns>n results in the order of the requests.</returns>
+    /// <exception cref="ArgumentException">As <see cref="Predict"/>, for the first request that is refused.</exception>
+    public static SignalTable[] PredictAll(IReadOnlyList<PredictionRequest> requests, int threads)
+    {
+        ArgumentNullException.ThrowIfNull(requests);
+        return ComputeAll(requests, threads, pruned: true);
+    }
+
+    internal static SignalTable[] ComputeAll(IReadOnlyList<PredictionRequest> requests, int threads, bool pruned)
+    {
+        ArgumentOutOfRangeException.ThrowIfLessThan(threads, 1);
+        var tables = new SignalTable[requests.Count];
+        var errors = new ArgumentException?[requests.Count];
+        var next = 0;
+
+        // Small portions drawn from one counter, so that no thread waits for another with longer trains.
+        void Work()
+        {
+            const int Portion = 8;
+            for (var start = Interlocked.Add(ref next, Portion) - Portion; start < tables.Length; start = Interlocked.Add(ref next, Portion) - Portion)
+                for (var i = start; i < Math.Min(start + Portion, tables.Length); i++)
+                    (tables[i], errors[i]) = Try(requests[i], pruned);
+        }
+
+        if (threads == 1 || requests.Count == 1)
+            Work();
+        else
+            Parallel.For(0, threads, new ParallelOptions { MaxDegreeOfParallelism = threads }, _ => Work());
+        return Array.Find(errors, e => e is not null) is { } error ? throw new ArgumentException(error.Message, error) : tables;
+    }
+
+    private static (SignalTable Table, ArgumentException? Error) Try(PredictionRequest request, bool pruned)
+    {
+        try
+        {
+            return (Compute(request.Series, request.Setting, request.Lanes, request.Outputs, pruned, LaneWidth.Machine), null);
+        }
+        catch (ArgumentException e)
+        {
+            return (null!, e);
+        }
+    }
+
+    /// <summary><see cref="Predict"/> with pruning and lane width chosen: for tests and for measuring.</summary>
     internal static SignalTable Compute(
-        Series series, PredictionSetting setting, LaneTable lanes, PredictionOutputs outputs, bool pruned, LaneWidth width)
+        Series series, PredictionSetting setting, LaneTable lanes, PredictionOutputs outputs, bool pruned, LaneWidth width, SignalTable? reused = null)
     {
         ArgumentNullException.ThrowIfNull(series);
         ArgumentNullException.ThrowIfNull(setting);
@@ -34,13 +97,14 @@ public static class SignalPredictor
         var program = SeriesCompiler.Compile(series, pruned);
         LaneChecks.Require(lanes, program);
         var allEchoes = outputs.HasFlag(PredictionOutputs.AllEchoes);
-        var spectral = series.Preparations.Any(p => p is SpectralSaturation or SpectralInversion);
-        var peaks = PeakLanes.Of(lanes, apart: spectral || program.ShiftTurnsPhase || HasShapedInversion(series, setting));
+        var peaks = PeakLanes.Of(lanes, apart: program.ShiftTurnsPhase || HasPulseThatSeesFrequency(program, setting));
 
-        var run = new PredictionRun(series, program, setting, peaks, allEchoes, series.Timing.State, width);
+        var mixes = series.Preparations.Count > 0 && Array.Exists(lanes.UnpreparedInflow, fraction => fraction > 0);
+        reused = Combination.IsPlain(program, peaks, mixes) ? reused : null;
+        var run = new PredictionRun(series, program, setting, peaks, allEchoes, series.Timing.State, width, reused);
         run.Run();
         PredictionRun? fresh = null;
-        if (series.Preparations.Count > 0 && Array.Exists(lanes.UnpreparedInflow, fraction => fraction > 0))
+        if (mixes)
         {
             var bare = series with { Preparations = [] };
             var bareProgram = SeriesCompiler.Compile(bare, pruned) with { Closure = Closure.Longitudinal };
@@ -48,10 +112,14 @@ public static class SignalPredictor
             fresh.Run();
         }
 
-        return Combination.Of(series, setting, program, lanes, peaks, run, fresh, allEchoes);
+        return Combination.Of(series, setting, program, lanes, peaks, run, fresh, allEchoes, reused);
     }
 
-    private static bool HasShapedInversion(Series series, PredictionSetting setting) =>
-        setting.Pulses == PulseModelling.Modelled
-        && series.Preparations.Any(p => p is Inversion { Pulse: not (EfficiencyInversion or HardPulse { Duration: 0 }) });
+    private static bool HasPulseThatSeesFrequency(CompiledSeries program, PredictionSetting setting)
+    {
+        foreach (var map in program.Maps)
+            if (map.Preparation is not Inversion { Pulse: EfficiencyInversion } && setting.Pulses == PulseModelling.Modelled)
+                return true;
+        return false;
+    }
 }

@@ -8,21 +8,47 @@ namespace ProtoLedger.Physics.Prediction;
 /// </remarks>
 public sealed class SignalTable
 {
-    private readonly Func<IReadOnlyList<Assumption>> _assume;
+    private Func<IReadOnlyList<Assumption>> _assume;
     private IReadOnlyList<Assumption>? _assumptions;
 
-    internal SignalTable(int count, IReadOnlyList<double> echoTimes, Func<IReadOnlyList<Assumption>> assume)
+    /// <summary>Makes a table that <see cref="SignalPredictor.PredictInto"/> fills again and again.</summary>
+    /// <param name="count">Number of lanes, ≥ 0.</param>
+    public SignalTable(int count)
+        : this(count, [], () => [])
     {
-        Count = count;
-        Signed = new double[count];
-        Magnitude = new double[count];
-        LongitudinalBeforeExcitation = new double[count];
-        LongitudinalAtEnd = new double[count];
+    }
+
+    internal SignalTable(int count, IReadOnlyList<double> echoTimes, Func<IReadOnlyList<Assumption>> assume)
+        : this(new double[count], new double[count], new double[count], new double[count], echoTimes, assume)
+    {
+    }
+
+    /// <summary>Takes the columns over; nothing is copied.</summary>
+    internal SignalTable(
+        double[] signed, double[] before, double[] end, double[] start, IReadOnlyList<double> echoTimes, Func<IReadOnlyList<Assumption>> assume)
+    {
+        Count = signed.Length;
+        Signed = signed;
+        Magnitude = new double[Count];
+        LongitudinalBeforeExcitation = before;
+        LongitudinalAtEnd = end;
+        LongitudinalAtStart = start;
         EchoTimes = echoTimes;
-        LongitudinalAtStart = new double[count];
-        Echoes = new double[count * echoTimes.Count];
-        EchoMagnitudes = new double[count * echoTimes.Count];
+        Echoes = new double[Count * echoTimes.Count];
+        EchoMagnitudes = new double[Count * echoTimes.Count];
         _assume = assume;
+    }
+
+    internal void Assume(Func<IReadOnlyList<Assumption>> assume) => (_assume, _assumptions) = (assume, null);
+
+    internal void CopyFrom(SignalTable other)
+    {
+        other.Signed.CopyTo(Signed, 0);
+        other.Magnitude.CopyTo(Magnitude, 0);
+        other.LongitudinalBeforeExcitation.CopyTo(LongitudinalBeforeExcitation, 0);
+        other.LongitudinalAtEnd.CopyTo(LongitudinalAtEnd, 0);
+        other.LongitudinalAtStart.CopyTo(LongitudinalAtStart, 0);
+        Assume(other._assume);
     }
 
     /// <summary>Number of lanes.</summary>

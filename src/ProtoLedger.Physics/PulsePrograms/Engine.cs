@@ -28,12 +28,13 @@ internal static unsafe class Engine
     /// <summary>Computes every lane.</summary>
     /// <param name="plan">The structure.</param>
     /// <param name="durations">ms, one a duration slot.</param>
-    /// <param name="angles">Degrees at B1+ scale 1, one an angle slot.</param>
+    /// <param name="angles">Degrees at B1+ scale 1, one an angle slot at least.</param>
     /// <param name="arguments">Lanes and results; inputs must be valid (positive T1, T2, B1).</param>
     /// <param name="width">Lanes at once.</param>
     internal static void Run(
         ProgramPlan plan, ReadOnlySpan<double> durations, ReadOnlySpan<double> angles, in EngineArguments arguments, LaneWidth width = LaneWidth.Machine)
     {
+        angles = angles[..plan.AngleCount];
         if (width == LaneWidth.Machine)
             width = Vector512.IsHardwareAccelerated ? LaneWidth.Eight : Vector256.IsHardwareAccelerated ? LaneWidth.Four
                 : Vector128.IsHardwareAccelerated ? LaneWidth.Two : LaneWidth.Scalar;
@@ -61,13 +62,20 @@ internal static unsafe class Engine
         for (var i = 0; i < times.Length; i++)
             times[i] = plan.Times[i].Evaluate(durations);
 
+        // Two groups of lanes at once: short trains are bound by latency.
         var lane = 0;
-        var pair = 2 * T.Width;
-        for (; lane <= arguments.Count - pair; lane += pair)
-            LaneBlock<LanePair<T>>.Run(plan, times, angles, arguments, lane);
-        for (; lane <= arguments.Count - T.Width; lane += T.Width)
-            LaneBlock<T>.Run(plan, times, angles, arguments, lane);
+        for (; arguments.Count - lane > T.Width; lane += 2 * T.Width)
+            RunBlock<LanePair<T>>(plan, times, angles, arguments, lane);
         if (lane < arguments.Count)
+            RunBlock<T>(plan, times, angles, arguments, lane);
+    }
+
+    private static void RunBlock<T>(ProgramPlan plan, ReadOnlySpan<double> times, ReadOnlySpan<double> angles, in EngineArguments arguments, int lane)
+        where T : unmanaged, ILanes<T>
+    {
+        if (lane + T.Width <= arguments.Count)
+            LaneBlock<T>.Run(plan, times, angles, arguments, lane);
+        else
             RunTail<T>(plan, times, angles, arguments, lane);
     }
 

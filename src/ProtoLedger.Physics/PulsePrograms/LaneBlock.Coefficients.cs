@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using ProtoLedger.Physics.Kernels;
 
 namespace ProtoLedger.Physics.PulsePrograms;
@@ -16,7 +17,8 @@ internal static unsafe partial class LaneBlock<T>
             var angles = plan.AngleCount;
             E1 = memory;
             E2 = E1 + times;
-            SquaredHalfSine = E2 + times;
+            Ratio = E2 + times;
+            SquaredHalfSine = Ratio + times;
             Sine = SquaredHalfSine + angles;
             MinusSine = Sine + angles;
             Cosine = MinusSine + angles;
@@ -32,6 +34,9 @@ internal static unsafe partial class LaneBlock<T>
 
         /// <summary>exp(−t/T1) and exp(−t/T2), one a time.</summary>
         public readonly T* E1, E2;
+
+        /// <summary>exp(−t/T1) / exp(−t/T2), one a time.</summary>
+        public readonly T* Ratio;
 
         /// <summary>Of each angle times B1+.</summary>
         public readonly T* SquaredHalfSine, Sine, MinusSine, Cosine;
@@ -49,55 +54,63 @@ internal static unsafe partial class LaneBlock<T>
         public readonly T* P, M, Z;
 
         internal static int Size(ProgramPlan plan) =>
-            2 * plan.Times.Length + 4 * plan.AngleCount + 2 * plan.Pairs.Length + 2 * plan.Trains.Length + plan.SampleCount
+            3 * plan.Times.Length + 4 * plan.AngleCount + 2 * plan.Pairs.Length + 2 * plan.Trains.Length + plan.SampleCount
             + 2 * plan.DephasingSlots + plan.StoredSlots;
 
-        internal void Compute(
-            ProgramPlan plan, ReadOnlySpan<double> times, ReadOnlySpan<double> angles, T rate1, T rate2, T b1, bool forward)
+        [MethodImpl(MethodImplOptions.NoInlining)]
+        internal void ComputeDecays(Decay[] decays, ReadOnlySpan<double> times, T rate1, T rate2)
         {
-            for (var i = 0; i < times.Length; i++)
+            // E1, E2 and the ratios stand one behind the other; so do the rates.
+            var count = times.Length;
+            var rates = stackalloc T[3];
+            (rates[0], rates[1], rates[2]) = (rate1, rate2, rate1 - rate2);
+            foreach (ref readonly var decay in decays.AsSpan())
             {
-                var use = plan.Uses[i];
-                var minusTime = T.All(-times[i]);
-                if ((use & (TimeUse.BackwardT1 | TimeUse.BackwardRatio)) != 0)
-                    E1[i] = Elementary.Exp(minusTime * rate1);
-                if ((use & (TimeUse.BackwardT2 | TimeUse.BackwardRatio)) != 0)
-                    E2[i] = Elementary.Exp(minusTime * rate2);
+                var target = E1 + (int)decay.Rate * count;
+                target[decay.Time] = decay.BaseTime < 0
+                    ? Elementary.Exp(T.All(-times[decay.Time]) * rates[(int)decay.Rate])
+                    : Power(target[decay.BaseTime], decay.Power);
             }
+        }
 
-            if (forward)
-                ComputeForward(times, rate1, rate2);
-
+        [MethodImpl(MethodImplOptions.NoInlining)]
+        internal void ComputeAngles(ReadOnlySpan<double> angles, T b1)
+        {
             for (var i = 0; i < angles.Length; i++)
             {
                 Elementary.SinCos(T.All(angles[i] * (Math.PI / 360)) * b1, out var sine, out var cosine);
                 var squared = sine * sine;
+                var whole = T.All(2) * sine * cosine;
                 SquaredHalfSine[i] = squared;
-                Sine[i] = T.All(2) * sine * cosine;
-                MinusSine[i] = -Sine[i];
+                Sine[i] = whole;
+                MinusSine[i] = -whole;
                 Cosine[i] = T.MultiplyAdd(T.All(-2), squared, T.All(1));
             }
+        }
 
-            for (var i = 0; i < plan.Pairs.Length; i++)
+        [MethodImpl(MethodImplOptions.NoInlining)]
+        internal void ComputePairs()
+        {
+            var pairs = _plan.Pairs;
+            for (var i = 0; i < pairs.Length; i++)
             {
-                var (angle, time) = plan.Pairs[i];
-                var ratio = time < 0 ? T.All(1) : Elementary.Exp(T.All(-times[time]) * (rate1 - rate2));
+                var (angle, time) = pairs[i];
+                var ratio = time < 0 ? T.All(1) : Ratio[time];
                 MinusHalfSineRatio[i] = T.All(-0.5) * Sine[angle] * ratio;
                 CosineRatio[i] = Cosine[angle] * ratio;
             }
         }
 
-        /// <summary>Factors that only runs in the forward direction need.</summary>
-        internal void ComputeForward(ReadOnlySpan<double> times, T rate1, T rate2)
+        private static T Power(T value, int exponent)
         {
-            for (var i = 0; i < times.Length; i++)
+            var result = T.All(1);
+            for (; exponent > 0; exponent >>= 1)
             {
-                var minusTime = T.All(-times[i]);
-                if ((_plan.Uses[i] & TimeUse.ForwardT1) != 0)
-                    E1[i] = Elementary.Exp(minusTime * rate1);
-                if ((_plan.Uses[i] & TimeUse.ForwardT2) != 0)
-                    E2[i] = Elementary.Exp(minusTime * rate2);
+                result = (exponent & 1) != 0 ? result * value : result;
+                value *= value;
             }
+
+            return result;
         }
     }
 }

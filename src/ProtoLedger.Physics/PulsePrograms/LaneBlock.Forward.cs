@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using ProtoLedger.Physics.Kernels;
 
 namespace ProtoLedger.Physics.PulsePrograms;
@@ -7,6 +8,7 @@ internal static unsafe partial class LaneBlock<T>
     /// <summary>Below this a transverse factor is taken as nothing: what it would be divided out of is smaller still.</summary>
     private const double Nothing = 1e-290;
 
+    [MethodImpl(MethodImplOptions.NoInlining)]
     private static void ThroughForward(TrainPlan train, in Coefficients c, out T slope, out T offset, out T signal)
     {
         var sine = c.Sine[train.ExcitationAngle];
@@ -36,6 +38,7 @@ internal static unsafe partial class LaneBlock<T>
     }
 
     /// <summary>Carries the states through the pulses; what was tipped is also read at the samples.</summary>
+    [MethodImpl(MethodImplOptions.NoInlining)]
     private static void CarryForward(TrainPlan train, ForwardRun run, in Coefficients c, bool recovers, T sine)
     {
         var tipped = ReferenceEquals(run, train.Tipped);
@@ -61,6 +64,7 @@ internal static unsafe partial class LaneBlock<T>
         }
     }
 
+    [MethodImpl(MethodImplOptions.NoInlining)]
     private static void RotateForward(in PulseSpan span, in Coefficients c)
     {
         if (span.Count == 0)

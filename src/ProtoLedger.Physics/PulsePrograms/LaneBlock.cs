@@ -10,6 +10,7 @@ namespace ProtoLedger.Physics.PulsePrograms;
 /// time. Signals are linear in the magnetisation before their excitation: what recovers within a train never reaches an echo, by parity of the orders.
 /// States: see <see cref="TrainPlan"/>; the rotation of an order (p, m, z) about the refocusing axis is d = p − m, u = sin²(α/2) d + sin(α) z,
 /// p − u, m + u, ½ sin(α) d + cos(α) z, from the matrices of Weigel, J Magn Reson Imaging 2015;41:266, in these two channels.
+/// Methods that must not be inlined are marked: the compiler has one inlining budget a method, and the operators of the lanes have to fit in it.
 /// </remarks>
 internal static unsafe partial class LaneBlock<T>
     where T : unmanaged, ILanes<T>
@@ -17,17 +18,22 @@ internal static unsafe partial class LaneBlock<T>
     /// <summary>Above this, the ratio of the relaxation factors that is scaled out would leave the range of a double: such lanes are carried forward instead.</summary>
     private const double LargestScaling = 250;
 
+    [MethodImpl(MethodImplOptions.NoInlining)]
     internal static void Run(ProgramPlan plan, ReadOnlySpan<double> times, ReadOnlySpan<double> angles, in EngineArguments arguments, int lane)
     {
         var memory = (T*)Workspace.Rent(sizeof(T) * Coefficients.Size(plan));
         var c = new Coefficients(plan, memory);
-        var rate1 = T.All(1) / T.Load(arguments.T1 + lane);
-        var rate2 = T.All(1) / T.Load(arguments.T2 + lane);
-        c.Compute(plan, times, angles, rate1, rate2, T.Load(arguments.B1 + lane), NeedsForward(plan, arguments));
-
-        var a = T.All(1);
-        var b = T.All(0);
         var one = T.All(1);
+        var rate1 = one / T.Load(arguments.T1 + lane);
+        var rate2 = one / T.Load(arguments.T2 + lane);
+        c.ComputeDecays(plan.Decays, times, rate1, rate2);
+        c.ComputeAngles(angles, T.Load(arguments.B1 + lane));
+        c.ComputePairs();
+        if (NeedsForward(plan, arguments))
+            c.ComputeDecays(plan.ForwardDecays, times, rate1, rate2);
+
+        var a = one;
+        var b = T.All(0);
         T beforeA = one, beforeB = b, endA = one, endB = b, effective = b;
         foreach (var block in plan.Blocks)
         {
@@ -52,7 +58,7 @@ internal static unsafe partial class LaneBlock<T>
                     var train = plan.Trains[block.Index];
                     c.BeforeA[block.Index] = a;
                     c.BeforeB[block.Index] = b;
-                    Through(train, c, times, rate1, rate2, arguments.Samples != null, out var slope, out var offset, out var signal);
+                    Through(plan, train, c, times, rate1, rate2, arguments.Samples != null, out var slope, out var offset, out var signal);
                     if (train.EffectiveIndex >= 0)
                         (beforeA, beforeB, effective) = (a, b, signal);
                     a *= slope;
@@ -69,12 +75,17 @@ internal static unsafe partial class LaneBlock<T>
         T.Store(before, arguments.Before + lane);
         T.Store(T.MultiplyAdd(endA, z, endB), arguments.End + lane);
         T.Store(z, arguments.Period + lane);
-        if (arguments.Samples == null)
-            return;
+        if (arguments.Samples != null)
+            StoreSamples(plan, c, z, arguments, lane);
+    }
+
+    [MethodImpl(MethodImplOptions.NoInlining)]
+    private static void StoreSamples(ProgramPlan plan, in Coefficients c, T z, in EngineArguments arguments, int lane)
+    {
         for (var t = 0; t < plan.Trains.Length; t++)
         {
             var train = plan.Trains[t];
-            before = T.MultiplyAdd(c.BeforeA[t], z, c.BeforeB[t]);
+            var before = T.MultiplyAdd(c.BeforeA[t], z, c.BeforeB[t]);
             for (var s = train.FirstSample; s < train.FirstSample + train.SampleCount; s++)
                 T.Store(c.Samples[s] * before, arguments.Samples + (long)s * arguments.SampleStride + lane);
         }
@@ -83,6 +94,7 @@ internal static unsafe partial class LaneBlock<T>
     private static bool NeedsForward(ProgramPlan plan, in EngineArguments arguments) =>
         arguments.Samples != null || (plan.Trains.Length > 0 && plan.Trains[0].End is null);
 
+    [MethodImpl(MethodImplOptions.NoInlining)]
     private static T Start(in EngineArguments arguments, T a, T b)
     {
         if (arguments.Start == StartState.Steady)
@@ -94,14 +106,15 @@ internal static unsafe partial class LaneBlock<T>
     }
 
     /// <summary>Map of the longitudinal magnetisation through a train, and the signal over the magnetisation before it.</summary>
+    [MethodImpl(MethodImplOptions.NoInlining)]
     private static void Through(
-        TrainPlan train, in Coefficients c, ReadOnlySpan<double> times, T rate1, T rate2, bool samples, out T slope, out T offset, out T signal)
+        ProgramPlan plan, TrainPlan train, in Coefficients c, ReadOnlySpan<double> times, T rate1, T rate2, bool samples, out T slope, out T offset, out T signal)
     {
         var limit = T.All(LargestScaling);
         var scaling = T.All(times[train.Duration]) * (rate2 - rate1);
         var extreme = T.AnyLess(limit, scaling);
         if (extreme && !samples && train.End is not null)
-            c.ComputeForward(times, rate1, rate2);
+            c.ComputeDecays(plan.ForwardDecays, times, rate1, rate2);
         if (extreme || samples || train.End is null)
             ThroughForward(train, c, out slope, out offset, out signal);
         else
@@ -114,6 +127,7 @@ internal static unsafe partial class LaneBlock<T>
         signal = T.SelectLess(limit, scaling, signal, backwardSignal);
     }
 
+    [MethodImpl(MethodImplOptions.NoInlining)]
     private static void ThroughBackward(TrainPlan train, in Coefficients c, out T slope, out T offset, out T signal)
     {
         var sine = c.Sine[train.ExcitationAngle];
@@ -138,50 +152,61 @@ internal static unsafe partial class LaneBlock<T>
             : PullBackSignal(train.EffectiveSample, c) * c.E2[train.EffectiveSampleTime] * sine;
     }
 
+    [MethodImpl(MethodImplOptions.NoInlining)]
     private static T PullBackSignal(BackwardRun run, in Coefficients c)
     {
         c.P[run.StartSlot] = T.All(1);
-        var spans = run.Pulses;
-        for (var i = 0; i < spans.Length; i++)
+        var rotation = default(BackwardRotation);
+        var pair = -1;
+        foreach (ref readonly var span in run.Pulses.AsSpan())
         {
-            ref readonly var span = ref spans[i];
             Prepare(span, c);
             if (span.FoldP >= 0)
                 c.M[span.FoldM] += c.P[span.FoldP];
-            RotateBackward(span, c);
+            if (span.Pair != pair && span.Count > 0)
+                rotation = new BackwardRotation(c, span.Angle, pair = span.Pair);
+            rotation.Apply(c.P + span.P, c.M + span.M, c.Z + span.Z, span.Count, span.Stride);
         }
 
         return run.ResultRephasingSlot < 0 ? c.P[run.ResultSlot] : c.P[run.ResultSlot] + c.M[run.ResultRephasingSlot];
     }
 
+    [MethodImpl(MethodImplOptions.NoInlining)]
     private static T PullBackLongitudinal(TrainPlan train, in Coefficients c, out T offset)
     {
-        var one = T.All(1);
         if (train.LastInterval < 0)
         {
-            offset = one - c.E1[train.FirstInterval];
+            offset = T.All(1) - c.E1[train.FirstInterval];
             return c.E1[train.FirstInterval];
         }
 
-        var e = c.E1[train.LastInterval];
-        offset = one - e;
-        c.Z[0] = e;
-        var power = one;
-        var spans = train.End!.Pulses;
-        for (var i = 0; i < spans.Length; i++)
+        c.Z[0] = c.E1[train.LastInterval];
+        var sum = T.All(1) - c.Z[0];
+        var power = T.All(1);
+        var rotation = default(BackwardRotation);
+        var pair = -1;
+        var interval = -1;
+        var recovery = sum;
+        foreach (ref readonly var span in train.End!.Pulses.AsSpan())
         {
-            ref readonly var span = ref spans[i];
             Prepare(span, c);
             if (span.FoldP >= 0)
                 c.M[span.FoldM] -= c.P[span.FoldP];
-            RotateBackward(span, c);
+            if (span.Pair != pair && span.Count > 0)
+                rotation = new BackwardRotation(c, span.Angle, pair = span.Pair);
+            rotation.Apply(c.P + span.P, c.M + span.M, c.Z + span.Z, span.Count, span.Stride);
             if (span.RecoverZ < 0)
                 continue;
-            offset = T.MultiplyAdd(c.Z[0] * power, one - c.E1[span.RecoverTime], offset);
-            if (i < spans.Length - 1)
-                power *= c.E2[span.RecoverTime];
+
+            // The form after this pulse in true scale is its scaled value times the T2 factors of the intervals behind it.
+            if (interval >= 0)
+                power *= c.E2[interval];
+            if (span.RecoverTime != interval)
+                recovery = T.All(1) - c.E1[interval = span.RecoverTime];
+            sum = T.MultiplyAdd(c.Z[0] * power, recovery, sum);
         }
 
+        offset = sum;
         return c.Z[0] * power * c.E1[train.FirstInterval];
     }
 
@@ -196,33 +221,33 @@ internal static unsafe partial class LaneBlock<T>
             c.Z[span.ZeroZ] = T.All(0);
     }
 
-    /// <summary>Transpose of rotation and following interval, T2 scaled out: the form on the states before from the form on the states after.</summary>
-    private static void RotateBackward(in PulseSpan span, in Coefficients c)
+    /// <summary>
+    /// Transpose of a rotation and the interval after it, T2 scaled out: the form on the states before from the form on the states after.
+    /// </summary>
+    private readonly struct BackwardRotation(in Coefficients c, int angle, int pair)
     {
-        var count = span.Count;
-        if (count == 0)
-            return;
-        var s2 = c.SquaredHalfSine[span.Angle];
-        var minusSine = c.MinusSine[span.Angle];
-        var minusHalf = c.MinusHalfSineRatio[span.Pair];
-        var cosine = c.CosineRatio[span.Pair];
-        var p = c.P + span.P;
-        var m = c.M + span.M;
-        var z = c.Z + span.Z;
-        var stride = span.Stride;
-        for (var k = 0; k < count; k++)
+        private readonly T _squaredHalfSine = c.SquaredHalfSine[angle];
+        private readonly T _minusSine = c.MinusSine[angle];
+        private readonly T _minusHalf = c.MinusHalfSineRatio[pair];
+        private readonly T _cosine = c.CosineRatio[pair];
+
+        [MethodImpl(MethodImplOptions.AggressiveInlining)]
+        internal void Apply(T* p, T* m, T* z, int count, nint stride)
         {
-            var a = *p;
-            var b = *m;
-            var s = *z;
-            var d = a - b;
-            var u = T.MultiplyAdd(minusHalf, s, s2 * d);
-            *p = a - u;
-            *m = b + u;
-            *z = T.MultiplyAdd(minusSine, d, cosine * s);
-            p += stride;
-            m += stride;
-            z += stride;
+            for (; count > 0; count--)
+            {
+                var a = *p;
+                var b = *m;
+                var s = *z;
+                var d = a - b;
+                var u = T.MultiplyAdd(_minusHalf, s, _squaredHalfSine * d);
+                *p = a - u;
+                *m = b + u;
+                *z = T.MultiplyAdd(_minusSine, d, _cosine * s);
+                p += stride;
+                m += stride;
+                z += stride;
+            }
         }
     }
 }

@@ -27,7 +27,8 @@ internal sealed class ProgramPlan
     private ProgramPlan(PlanTables tables, Block[] blocks, TrainPlan[] trains, PulseStep[] steps)
     {
         Times = tables.Times;
-        Uses = tables.Uses;
+        Decays = tables.Decays(TimeUse.BackwardT1, TimeUse.BackwardT2, TimeUse.BackwardRatio);
+        ForwardDecays = tables.Decays(TimeUse.ForwardT1, TimeUse.ForwardT2, TimeUse.None);
         Pairs = tables.Pairs;
         Blocks = blocks;
         Trains = trains;
@@ -40,7 +41,11 @@ internal sealed class ProgramPlan
 
     public TimeSum[] Times { get; }
 
-    public TimeUse[] Uses { get; }
+    /// <summary>Relaxation factors that every run needs.</summary>
+    public Decay[] Decays { get; }
+
+    /// <summary>Relaxation factors that runs in the forward direction need.</summary>
+    public Decay[] ForwardDecays { get; }
 
     public (int Angle, int Time)[] Pairs { get; }
 

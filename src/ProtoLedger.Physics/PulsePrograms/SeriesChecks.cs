@@ -71,8 +71,8 @@ internal static class SeriesChecks
         if (train.RefocusingFlipAngles.Count != 1 && train.RefocusingFlipAngles.Count != train.EchoTrainLength)
             throw new ArgumentException(
                 $"RefocusingFlipAngles: {train.RefocusingFlipAngles.Count} angles; there must be one, or one for each of the {train.EchoTrainLength} echoes.");
-        foreach (var angle in train.RefocusingFlipAngles)
-            Angle("RefocusingFlipAngles", angle);
+        for (var i = 0; i < train.RefocusingFlipAngles.Count; i++)
+            Angle("RefocusingFlipAngles", train.RefocusingFlipAngles[i]);
         if (train.FlipBackAngle is { } flipBack && !(Math.Abs(flipBack) <= 180))
             throw new ArgumentException($"flipBackAngle: {flipBack}° must lie in [−180, 180].");
     }

@@ -2,7 +2,7 @@ namespace ProtoLedger.Physics.PulsePrograms;
 
 /// <summary>A time made of duration slots: Σ count · duration.</summary>
 /// <param name="Terms">Slots in rising order, each with its count.</param>
-internal sealed record TimeSum(IReadOnlyList<(int Slot, int Count)> Terms)
+internal sealed record TimeSum((int Slot, int Count)[] Terms)
 {
     internal static TimeSum Of(IEnumerable<int> slots) =>
         new([.. slots.GroupBy(s => s).OrderBy(g => g.Key).Select(g => (g.Key, g.Count()))]);

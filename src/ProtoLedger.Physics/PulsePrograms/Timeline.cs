@@ -19,13 +19,20 @@ internal static class Timeline
     internal static PreparationEvent[] Place(Series series, double readoutEnd)
     {
         var own = OwnEvents(series);
-        var start = own.Length == 0 ? 0 : own.Min(e => e.Start);
+        var start = 0.0;
+        var recurs = false;
+        foreach (var e in own)
+        {
+            start = Math.Min(start, e.Start);
+            recurs |= RecursPerSlice(e.Preparation);
+        }
+
         var period = series.Readout.RepetitionTime;
         if (start + period < readoutEnd - Slack)
             throw new ArgumentException(
                 $"RepetitionTime: {period} ms is too short, preparations and readout take {readoutEnd - start} ms.");
 
-        var all = own.Concat(OfOtherSlices(series, own, start)).OrderBy(e => e.Start).ToArray();
+        var all = recurs ? [.. own.Concat(OfOtherSlices(series, own, start)).OrderBy(e => e.Start)] : own;
         for (var i = 0; i < all.Length; i++)
         {
             var (next, what) = i + 1 < all.Length ? (all[i + 1].Start, "the next preparation") : (start + period, "the next repetition");
@@ -91,7 +98,7 @@ internal static class Timeline
         var period = series.Readout.RepetitionTime;
         foreach (var e in own)
         {
-            if (e.Preparation is not (SpectralSaturation or SpectralInversion))
+            if (!RecursPerSlice(e.Preparation))
                 continue;
             for (var k = 1; k < slices; k++)
             {
@@ -101,6 +108,8 @@ internal static class Timeline
             }
         }
     }
+
+    private static bool RecursPerSlice(Preparation preparation) => preparation is SpectralSaturation or SpectralInversion;
 
     private static PreparationEvent At(double start, double duration, Preparation preparation) => new(start, start + duration, preparation);
 

@@ -48,10 +48,20 @@ internal sealed class MergeBuilder
         {
             var (i, j) = (IndexOf(oldNames, name), IndexOf(newNames, name));
             var (before, after) = (i < 0 ? null : old[i], j < 0 ? null : @new[j]);
-            return Walk(before, after, shape.Item, place.IntoItem(i, j, after ?? before!));
+            return Walk(before, after, shape.Item, place.IntoItem(i, j, after ?? before!, Ordinal(name, newOrder)));
         });
         var oldOrder = reordered is null ? newOrder : Interleave(oldNames, newNames);
         return new ListMerge([.. oldOrder.Select(name => merges[name])], [.. newOrder.Select(name => merges[name])], reordered);
+    }
+
+    /// <summary>Number of an item among those of equal identity, from 1; null where it is alone.</summary>
+    private static int? Ordinal(string name, List<string> all)
+    {
+        var mark = name.LastIndexOf('#');
+        var identity = mark < 0 ? name : name[..mark];
+        return mark < 0 && !all.Contains(identity + "#1")
+            ? null
+            : mark < 0 ? 1 : int.Parse(name.AsSpan(mark + 1), System.Globalization.CultureInfo.InvariantCulture) + 1;
     }
 
     /// <summary>All of the leading list in its order, the others after the neighbour that precedes them in theirs.</summary>

@@ -36,7 +36,24 @@ public sealed class DocumentDifferenceTests
             "preparations:\n      - {kind: t2Preparation, preparationTime: 40}\n      - {kind: inversion, InversionTime: 2400, pulse: adiabatic}");
         var change = Assert.Single(Compare(changed).Changes);
         Assert.Equal((ChangeKind.Added, "/series/0/preparations/0"), (change.Kind, change.Pointer));
-        Assert.Equal(40, change.New!["preparationTime"]!.GetValue<double>());
+        Assert.Equal(("T2 preparation", 40), (change.Label, change.New!["preparationTime"]!.GetValue<double>()));
+    }
+
+    [Theory]
+    [InlineData("InversionTime: 2400", "InversionTime: 2300", "inversion time")]
+    [InlineData("InversionTime: 500", "InversionTime: 480", "inversion time, second inversion")]
+    [InlineData("low: 8500", "low: 8600", "lowest allowed value, /readout/RepetitionTime")]
+    [InlineData("scanTimeSeconds: 216", "scanTimeSeconds: 200", "recorded scan time, linden-3t")]
+    [InlineData("dose: 0.1", "dose: 0.2", "contrast dose")]
+    public void Between_OneValue_IsNamedInTradeWords(string old, string replacement, string label) =>
+        Assert.Equal(label, Assert.Single(Compare(Samples.Protocol.With(old, replacement)).Changes).Label);
+
+    [Fact]
+    public void Between_SecondInversionAdded_IsNamedByItsOrder()
+    {
+        var change = Assert.Single(Compare(Samples.Protocol.With(
+            "{kind: inversion, InversionTime: 2400, pulse: adiabatic}", "{kind: inversion, InversionTime: 2400, pulse: adiabatic}\n      - {kind: inversion, InversionTime: 400}")).Changes);
+        Assert.Equal((ChangeKind.Added, "second inversion"), (change.Kind, change.Label));
     }
 
     [Fact]

@@ -193,6 +193,42 @@ public sealed partial class ChangeReportTests
     }
 
     [Fact]
+    public void RelativeRfPower_OfAnyScale_IsWrittenWithOldAsOne()
+    {
+        var power = SampleReport.Cut.Effects.Single(e => e.Observable == "relativeRfPower") with { Before = new PredictedValue(659, 659, 659), After = new PredictedValue(989, 989, 989) };
+        var words = Words(Encoding.UTF8.GetString(ReportRenderer.Render(SampleReport.Cut with { Effects = [power], Appearances = [] }).Html));
+        Assert.Contains("RF power (old = 1) 1.0 1.5 ▼ worse", words, StringComparison.Ordinal);
+        Assert.Contains("Relative RF power is predicted to go from 1 to 1.50.", words, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void Attributions_WithoutFinding_StandInATable()
+    {
+        var other = SampleReport.Cut.Attributions[0] with { Observable = "signal", Reference = null, Contributions = [new Contribution("RepetitionTime", "RepetitionTime 9000 to 6000 ms", 0.25, 0)] };
+        var words = Words(Encoding.UTF8.GetString(ReportRenderer.Render(SampleReport.Cut with { Attributions = [.. SampleReport.Cut.Attributions, other], Appearances = [] }).Html));
+        Assert.Contains("Signal of ventricles and sulci nominal 0.02 1.2 RepetitionTime 9000 to 6000 ms: +0.25", words, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void NextSteps_ThatDifferByPlaceOnly_AreOne()
+    {
+        var step = new ReportStep("enter the new values", "linden-3t", "technologist", "after approval");
+        var words = Words(Encoding.UTF8.GetString(ReportRenderer.Render(SampleReport.Cut with { NextSteps = [step, step with { Where = "birch-15t" }], Appearances = [] }).Html));
+        Assert.Contains("1 Enter the new values Linden 3 T and Birch 1.5 T technologist after approval", words, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void Findings_OfAnExpectationThatStillHolds_AreToldOnce()
+    {
+        var cost = SampleReport.Cut.Findings[0] with { Sentence = "scan time falls", Observable = "scanTime", Subject = null, Reference = null, Direction = ProtoLedger.Regression.Findings.FindingDirection.Better };
+        var held = cost with { Sentence = "scan time goes down", Severity = -1, Transition = ProtoLedger.Regression.Evaluation.Transition.StillHolds, ExpectationTitle = "short enough", ProbabilityHolds = 1 };
+        var page = Encoding.UTF8.GetString(ReportRenderer.Render(SampleReport.Cut with { Findings = [cost, held], Appearances = [] }).Html);
+        var first = Words(page[..page.IndexOf("<nav", StringComparison.Ordinal)]);
+        Assert.Contains("Scan time falls.", first, StringComparison.Ordinal);
+        Assert.DoesNotContain("Scan time goes down", first, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Fragment_OfAStoredReport_IsItsMainElement()
     {
         var fragment = ReportPage.Fragment(Rendered.Html);

@@ -1,4 +1,3 @@
-using ProtoLedger.Regression.Findings;
 using ProtoLedger.Reports.Model;
 using ProtoLedger.Reports.Wording;
 
@@ -36,10 +35,10 @@ internal static class Cautions
     private static string? PowerChange(ChangeReport report)
     {
         var largest = report.Effects
-            .Where(e => e is { Observable: "relativeRfPower", After: not null, Direction: not FindingDirection.Same })
-            .Select(e => e.After!.Nominal)
+            .Where(e => e is { Observable: "relativeRfPower", Before.Nominal: > 0, After: not null })
+            .Select(e => e.After!.Nominal / e.Before!.Nominal)
             .DefaultIfEmpty(1)
             .Max();
-        return largest > 1 ? Numbers.Plain(largest, 1) : null;
+        return largest > 1.005 ? Numbers.Plain(largest, 1) : null;
     }
 }

@@ -16,7 +16,7 @@ internal static partial class Details
             var changes = ReportWords.Join([.. repair.Changes.Select(c =>
                 $"{ReportWords.Code(c.Parameter)} {Numbers.Setting(c.From)} to {ReportWords.WithUnit(Numbers.Setting(c.To), c.Unit)}")]);
             page.Heading(3, $"{UserText.Literal(ReportWords.Capital(repair.ExpectationTitle))}: {UserText.Literal(repair.SeriesTitle)}, {words.Scanner(repair.ScannerId)}")
-                .Paragraph($"Change {changes}. The expectation then holds for {Numbers.Share(repair.ProbabilityHolds)} of plausible tissue values.");
+                .Paragraph($"Change {changes}. The expectation then holds for {Numbers.OfTissueValues(repair.ProbabilityHolds)}.");
             if (repair.Costs.Count == 0)
                 page.Paragraph("No other number moves.");
             else

@@ -1,3 +1,4 @@
+using ProtoLedger.Regression.Findings;
 using ProtoLedger.Reports.Model;
 using ProtoLedger.Reports.Plots;
 using ProtoLedger.Reports.Wording;
@@ -66,10 +67,10 @@ internal static partial class Details
             return;
         }
 
-        foreach (var series in report.Effects.GroupBy(e => (e.SeriesTitle, e.ScannerId)))
-            page.Heading(3, $"{UserText.Literal(series.Key.SeriesTitle)}, {words.Scanner(series.Key.ScannerId)}")
+        foreach (var series in report.Effects.GroupBy(e => (e.SeriesTitle, e.ScannerId, e.Condition)))
+            page.Heading(3, $"{UserText.Literal(series.Key.SeriesTitle)}, {words.Scanner(series.Key.ScannerId)}, {UserText.Literal(series.Key.Condition)}")
                 .Table(
-                    ["Number", "Condition", " Old", " New", "Direction", "Share of tissue values"],
+                    ["Number", " Old", " New", "Direction", "Share of tissue values"],
                     series.Select(Effect));
         page.Paragraph("In brackets: from the 5th to the 95th percentile over plausible tissue values.");
     }
@@ -80,10 +81,10 @@ internal static partial class Details
         return
         [
             ReportWords.Label(effect.Observable, effect.Subject, effect.Reference),
-            UserText.Literal(effect.Condition),
             old + Range(effect, effect.Before),
             @new + Range(effect, effect.After),
-            Mark.Of(effect.Direction).ToString(),
+            // A difference too small to be written is none to a reader.
+            Mark.Of(effect.Direction == FindingDirection.Different && old == @new ? FindingDirection.Same : effect.Direction).ToString(),
             effect.Share is { } share ? Numbers.Share(share) : "–",
         ];
     }
@@ -107,15 +108,39 @@ internal static partial class Details
         page.Paragraph("Each change of a signed number is divided among the changed parameters, averaged over every order in which they could have been made; parameters that are not valid apart count as one. The parts add up to the change.");
         for (var i = 0; i < report.Attributions.Count; i++)
         {
+            if (figures.Attributions[i] is not { } figure)
+                continue;
             var table = report.Attributions[i];
             page.Heading(3, $"{ReportWords.Label(table.Observable, table.Subject, table.Reference)}: {UserText.Literal(table.SeriesTitle)}, {words.Scanner(table.ScannerId)}, {UserText.Literal(table.Lane)}");
             var (old, @new) = ReportWords.Values(table.Observable, table.Before, table.After, table.Unit);
             var (seen, sees) = ReportWords.Values(table.Observable, table.MagnitudeBefore, table.MagnitudeAfter, table.Unit);
             page.Paragraph($"Signed: {old} to {@new}. Without sign, as the image shows it: {seen} to {sees}.{(table.Exact ? "" : " Orders were sampled; the standard error is stated.")}");
-            if (figures.Attributions[i] is { } figure)
-                Plot(page, figure);
+            Plot(page, figure);
         }
+
+        FurtherAttributions(page, report, figures, words);
     }
+
+    /// <summary>Numbers that no finding speaks of, one line each.</summary>
+    private static void FurtherAttributions(MarkdownWriter page, ChangeReport report, ReportFigures figures, ReportWords words)
+    {
+        var further = report.Attributions.Where((_, i) => figures.Attributions[i] is null).ToList();
+        foreach (var place in further.GroupBy(t => (t.SeriesTitle, t.ScannerId)))
+            page.Heading(3, $"Every other number: {UserText.Literal(place.Key.SeriesTitle)}, {words.Scanner(place.Key.ScannerId)}")
+                .Table(
+                    ["Number", "Where", " Signed, old", " Signed, new", "Parts"],
+                    place.Select(table =>
+                    {
+                        var (old, @new) = ReportWords.Values(table.Observable, table.Before, table.After, table.Unit);
+                        return (IReadOnlyList<string>)[ReportWords.Label(table.Observable, table.Subject, table.Reference), UserText.Literal(table.Lane), old, @new, Parts(table)];
+                    }).DistinctBy(row => string.Join('|', row)));
+    }
+
+    private static string Parts(AttributionTable table) => table.Contributions.Count == 0
+        ? "none"
+        : string.Join("; ", table.Contributions
+            .Select(c => AttributionChart.Relative(table, c))
+            .Select(c => $"{UserText.Literal($"{c.Parameter} {c.Change}")}: {AttributionChart.Amount(c)}"));
 
     private static void Verdicts(MarkdownWriter page, ChangeReport report, ReportWords words)
     {

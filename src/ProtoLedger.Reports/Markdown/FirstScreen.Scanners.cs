@@ -65,6 +65,8 @@ internal static partial class FirstScreen
         Add(scanner.StillFails, "still fails", "still fail");
         Add(scanner.NewlyHolds, "newly holds", "newly hold");
         Add(scanner.StillHolds, "still holds", "still hold");
+        var told = scanner.NewlyFails + scanner.NewlyUncertain + scanner.StillFails + scanner.NewlyHolds + scanner.StillHolds;
+        Add(scanner.WrittenExpectations - told, "other", "others");
         return $"{string.Join(", ", parts)} (of {Numbers.Whole(scanner.WrittenExpectations)})";
 
         void Add(int number, string one, string many)

@@ -36,7 +36,8 @@ internal static partial class FirstScreen
     private static void Findings(MarkdownWriter page, ChangeReport report, ReportWords words)
     {
         var groups = report.Findings
-            .GroupBy(f => (f.SeriesId, f.Observable, f.Subject, f.Reference, f.Direction, f.ExpectationTitle))
+            // What an expectation that still holds says is said by the finding without it.
+            .GroupBy(f => (f.SeriesId, f.SeriesTitle, f.Observable, f.Subject, f.Reference, f.Direction, Changed(f) ? f.ExpectationTitle : null))
             .Select(g => g.OrderByDescending(f => f.Severity).ThenBy(f => f.ScannerId, StringComparer.Ordinal).ToList())
             .OrderBy(g => Rank(g[0]))
             .ThenByDescending(g => g[0].Severity)
@@ -58,7 +59,7 @@ internal static partial class FirstScreen
         var worst = group[0];
         var text = $"{MarkOf(worst)} {UserText.Literal(ReportWords.Sentence(worst.Sentence))} {Where(group, words)}";
         if (worst.ExpectationTitle is { } title && worst.ProbabilityHolds is { } p)
-            text += $" Written expectation \u201C{UserText.Literal(title)}\u201D: holds for {Numbers.Share(p)} of plausible tissue values.";
+            text += $" Written expectation \u201C{UserText.Literal(title)}\u201D: holds for {Numbers.OfTissueValues(p)}.";
         if (worst.ReferenceMoved && worst.Reference is { } reference)
             text += $" Note that {UserText.Literal(reference)} itself changed.";
         return text;
@@ -85,7 +86,9 @@ internal static partial class FirstScreen
 
     /// <summary>What became of the expectation where one speaks of it, the direction otherwise.</summary>
     internal static Mark MarkOf(ReportFinding finding) =>
-        finding.Transition is { } t and not Transition.StillHolds and not Transition.NotComparable ? Mark.Of(t) : Mark.Of(finding.Direction);
+        Changed(finding) ? Mark.Of(finding.Transition!.Value) : Mark.Of(finding.Direction);
+
+    private static bool Changed(ReportFinding finding) => finding.Transition is not (null or Transition.StillHolds or Transition.NotComparable);
 
     /// <summary>Smaller is told earlier.</summary>
     internal static int Rank(ReportFinding finding) => finding.Transition switch
@@ -191,13 +194,13 @@ internal static partial class FirstScreen
         if (report.NextSteps.Count > 0)
             page.Table(
                 ["Step", "What", "Where", "By whom", "When"],
-                report.NextSteps.Select((step, i) => (IReadOnlyList<string>)
+                report.NextSteps.GroupBy(step => (step.What, step.ByWhom, step.When)).Select((step, i) => (IReadOnlyList<string>)
                 [
                     Numbers.Whole(i + 1),
-                    UserText.Literal(ReportWords.Capital(step.What)),
-                    words.Scanner(step.Where),
-                    UserText.Literal(step.ByWhom),
-                    UserText.Literal(step.When),
+                    UserText.Literal(ReportWords.Capital(step.Key.What)),
+                    ReportWords.Join([.. step.Select(s => words.Scanner(s.Where)).Distinct()]),
+                    UserText.Literal(step.Key.ByWhom),
+                    UserText.Literal(step.Key.When),
                 ]));
         page.Paragraph(Cautions.Short);
     }

@@ -17,6 +17,7 @@ public static class AttributionChart
     public static Figure Draw(string name, AttributionTable table, string scannerTitle)
     {
         ArgumentNullException.ThrowIfNull(table);
+        table = Relative(table);
         var label = ObservableWords.Label(table.Observable, table.Subject, table.Reference);
         var title = $"What moved {label}: {table.SeriesTitle}, {scannerTitle}, {table.Lane}";
         var height = 24 + (Row * (table.Contributions.Count + 2)) + 44;
@@ -68,8 +69,8 @@ public static class AttributionChart
         var to = from + contribution.Amount;
         var (x1, x2) = (axis.At(Math.Min(from, to)), axis.At(Math.Max(from, to)));
         var rises = contribution.Amount >= 0;
-        canvas.Label(Left - 12, Middle(row) - 2, Shorten(contribution.Parameter, 36), "end");
-        canvas.Label(Left - 12, Middle(row) + 12, Shorten(contribution.Change, 40), "end", size: 10.5);
+        canvas.Label(Left - 12, Middle(row) - 2, SvgCanvas.Shorten(contribution.Parameter, 36), "end");
+        canvas.Label(Left - 12, Middle(row) + 12, SvgCanvas.Shorten(contribution.Change, 40), "end", size: 10.5);
         canvas.Box(x1, Middle(row) - 9, Math.Max(1, x2 - x1), 18, rises ? "f1" : "f2", rises ? "#0072b2" : "#d55e00");
         if (!rises)
             canvas.Hatch(x1, Middle(row) - 9, Math.Max(1, x2 - x1), 18);
@@ -77,13 +78,31 @@ public static class AttributionChart
         canvas.Label(x2 + 8, Middle(row) + 4, Amount(contribution));
     }
 
-    private static string Amount(Contribution contribution) =>
+    /// <summary>The table with the number before as 1, where the number means nothing by itself.</summary>
+    private static AttributionTable Relative(AttributionTable table) => table with
+    {
+        Before = table.Before / Scale(table),
+        After = table.After / Scale(table),
+        Contributions = [.. table.Contributions.Select(c => Relative(table, c))],
+    };
+
+    /// <summary>A contribution on the scale of <see cref="ObservableWords.Values"/>.</summary>
+    internal static Contribution Relative(AttributionTable table, Contribution contribution) =>
+        contribution with
+        {
+            // A change that begins with its parameter's name need not say it twice.
+            Change = contribution.Change.StartsWith(contribution.Parameter + " ", StringComparison.Ordinal) ? contribution.Change[(contribution.Parameter.Length + 1)..] : contribution.Change,
+            Amount = contribution.Amount / Scale(table),
+            StandardError = contribution.StandardError / Scale(table),
+        };
+
+    private static double Scale(AttributionTable table) => ObservableWords.IsRelative(table.Observable) && table.Before > 0 ? table.Before : 1;
+
+    /// <summary>A signed amount, with its standard error where it has one.</summary>
+    internal static string Amount(Contribution contribution) =>
         contribution.StandardError > 0
             ? $"{Numbers.Change(contribution.Amount)} ± {Numbers.Plain(contribution.StandardError, 1)}"
             : Numbers.Change(contribution.Amount);
-
-    /// <summary>Cuts a label that would run into the plot.</summary>
-    private static string Shorten(string text, int length) => text.Length <= length ? text : text[..(length - 1)].TrimEnd() + "…";
 
     private static string Describe(AttributionTable table, string label) =>
         $"The signed value of {label} goes from {Numbers.Plain(table.Before, 1)} to {Numbers.Plain(table.After, 1)}. "

@@ -6,7 +6,7 @@ namespace ProtoLedger.Reports.Plots;
 /// <summary>Brightness of the tissues before and after on one scale.</summary>
 public static class SignalChart
 {
-    private const double Left = 190;
+    private const double Left = 236;
     private const double Right = 690;
     private const double Row = 30;
 
@@ -63,7 +63,7 @@ public static class SignalChart
 
     private static void Tissue(SvgCanvas canvas, Axis axis, (string Words, double Before, double After) tissue, double y)
     {
-        canvas.Label(Left - 10, y + 4, tissue.Words, "end");
+        canvas.Label(Left - 10, y + 4, SvgCanvas.Shorten(tissue.Words, 36), "end");
         canvas.Line(axis.At(tissue.Before), y, axis.At(tissue.After), y, Stroke.Axis with { Width = 2 });
         canvas.Marker(0, axis.At(tissue.Before), y, 6, Stroke.Series(3), false);
         canvas.Marker(1, axis.At(tissue.After), y, 4.5, Stroke.Series(0), true);

@@ -73,6 +73,9 @@ internal sealed class SvgCanvas
     public void Upright(double x, double y, string text) =>
         body.Append(CultureInfo.InvariantCulture, $"<text class=\"label\" fill=\"#1a2226\" text-anchor=\"middle\" transform=\"translate({N(x)} {N(y)}) rotate(-90)\">{Text(text)}</text>");
 
+    /// <summary>Cuts a label that would run into the plot; the table twin has it whole.</summary>
+    public static string Shorten(string text, int length) => text.Length <= length ? text : text[..(length - 1)].TrimEnd() + "…";
+
     private static string Class(Stroke stroke) =>
         $"class=\"{stroke.Kind}\" stroke=\"{stroke.Colour}\" stroke-width=\"{N(stroke.Width)}\"" + (stroke.Dashes.Length > 0 ? $" stroke-dasharray=\"{stroke.Dashes}\"" : "");
 

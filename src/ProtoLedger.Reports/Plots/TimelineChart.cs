@@ -42,7 +42,7 @@ public static class TimelineChart
 
     private static void Draw(SvgCanvas canvas, TimelineRow row, double y, Func<DateTimeOffset, double> at)
     {
-        canvas.Label(Left - 10, y + 19, row.Label.Length > 34 ? row.Label[..33] + "…" : row.Label, "end");
+        canvas.Label(Left - 10, y + 19, SvgCanvas.Shorten(row.Label, 34), "end");
         canvas.Hatch(Left, y + 5, Right - Left, Row - 10);
         foreach (var span in row.Spans)
         {

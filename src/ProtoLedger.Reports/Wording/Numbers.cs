@@ -5,33 +5,24 @@ namespace ProtoLedger.Reports.Wording;
 /// <summary>Numbers as people read them: few digits, a point, no group marks.</summary>
 internal static class Numbers
 {
-    /// <summary>Two numbers with the fewest decimals (two significant digits at least) at which they still differ.</summary>
+    /// <summary>Two numbers with two significant digits, three where only that tells numbers of 1 and more apart.</summary>
     public static (string Old, string New) Pair(double old, double @new)
     {
-        for (var extra = 0; ; extra++)
-        {
-            var pair = (Plain(old, extra), Plain(@new, extra));
-            if (pair.Item1 != pair.Item2 || extra == 2 || old.Equals(@new))
-                return pair;
-        }
+        var pair = (Plain(old), Plain(@new));
+        return pair.Item1 == pair.Item2 && !old.Equals(@new) && Math.Abs(old) >= 0.995 && Math.Abs(old) < 100
+            ? (Plain(old, 1), Plain(@new, 1))
+            : pair;
     }
 
-    /// <summary>A number with about two significant digits, plus <paramref name="extra"/> decimals.</summary>
+    /// <summary>A number with about two significant digits and at most two decimals, plus <paramref name="extra"/> decimals.</summary>
     public static string Plain(double value, int extra = 0)
     {
         if (!double.IsFinite(value))
             throw new ArgumentException("A report holds finite numbers only.", nameof(value));
-        var decimals = Math.Abs(value) switch
-        {
-            >= 100 => 0,
-            >= 10 => 0,
-            >= 1 => 1,
-            >= 0.01 or 0 => 2,
-            >= 0.001 => 3,
-            _ => 2,
-        };
-        var text = value.ToString("F" + (decimals + extra).ToString(CultureInfo.InvariantCulture), CultureInfo.InvariantCulture);
-        return Signed(text);
+        var size = Math.Abs(value);
+        var decimals = (size >= 9.95 ? 0 : size >= 0.995 ? 1 : 2) + extra;
+        var text = Signed(value.ToString("F" + decimals.ToString(CultureInfo.InvariantCulture), CultureInfo.InvariantCulture));
+        return IsZero(text) && size > 1e-9 && extra == 0 ? (value > 0 ? "under 0.01" : "\u22120.00") : text;
     }
 
     /// <summary>A number with its sign always shown, for contributions.</summary>
@@ -47,6 +38,10 @@ internal static class Numbers
         var whole = (long)Math.Round(seconds, MidpointRounding.AwayFromZero);
         return string.Create(CultureInfo.InvariantCulture, $"{whole / 60}:{whole % 60:00}");
     }
+
+    /// <summary>A share of tissue values in words: "all plausible tissue values", "about 87 % of plausible tissue values".</summary>
+    public static string OfTissueValues(double share) =>
+        share >= 1 ? "all plausible tissue values" : share <= 0 ? "no plausible tissue value" : $"{Share(share)} of plausible tissue values";
 
     /// <summary>A share in words: "more than 99 %", "about 87 %", "less than 1 %".</summary>
     public static string Share(double share) => share switch

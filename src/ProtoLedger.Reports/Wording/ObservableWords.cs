@@ -11,10 +11,10 @@ public static class ObservableWords
         {
             "signedSignal" => $"signed signal of {of}",
             "signal" => $"signal of {of}",
-            "contrastDifference" => $"contrast of {pair}, as difference",
-            "contrastRatio" => $"contrast of {pair}, as ratio",
+            "contrastDifference" => $"{pair}, difference",
+            "contrastRatio" => $"{pair}, ratio",
             "residualRatio" => $"{of} relative to {reference}",
-            "contrastToNoise" => $"contrast to noise of {pair}",
+            "contrastToNoise" => $"{pair}, contrast to noise",
             "nullTime" => $"inversion time that nulls {of}",
             "nullDistance" => $"distance of the inversion time from the null of {of}",
             "nullWindow" => $"inversion times that keep {of} within the limit",
@@ -54,6 +54,8 @@ public static class ObservableWords
     {
         if (observable == "slicesFit")
             return (YesNo(before), YesNo(after));
+        if (IsRelative(observable) && before is { } one and > 0)
+            (before, after) = (1, after / one);
         if (unit == "s")
             return (Time(before), Time(after));
         var (old, @new) = before is { } b && after is { } a
@@ -61,6 +63,9 @@ public static class ObservableWords
             : (before is { } x ? Numbers.Plain(x) : "none", after is { } y ? Numbers.Plain(y) : "none");
         return (WithUnit(old, unit), WithUnit(@new, unit));
     }
+
+    /// <summary>True for a number that means something only against the same number before, which is written as 1.</summary>
+    public static bool IsRelative(string observable) => observable is "relativeNoise" or "relativeRfPower";
 
     /// <summary>A text and its unit, with a blank between except before a degree sign.</summary>
     public static string WithUnit(string text, string unit) =>

@@ -81,6 +81,7 @@ public sealed class MalformedDocumentTests
         { "range of nothing", Protocol, "parameter: /readout/RepetitionTime", "parameter: /readout/Repetition", "/series/0/allowedRanges/0/parameter", "names no number" },
         { "range without its value", Protocol, "low: 8500", "low: 9500", "/series/0/allowedRanges/0", "lies outside the range" },
         { "range beyond the format", Protocol, "high: 10000", "high: 70000", "/series/0/allowedRanges/0/high", "beyond what the parameter can be" },
+        { "range with an end that cannot be played", Protocol, "low: 8500", "low: 3000", "/series/0/allowedRanges/0/low", "the series cannot be played: 15 of 30 slices in a pass" },
         { "recorded at a foreign scanner", Protocol, "      linden-3t: {scan", "      birch-15t: {scan", "/series/0/recorded/birch-15t", "not assigned" },
         { "variant of itself", Protocol, "ageGroup: adult", "ageGroup: adult\nvariantOf: brain-sample", "/variantOf", "variant of itself" },
         { "T2 longer than twice T1", DocumentKind.Catalogue, "T2: {mean: 78", "T2: {mean: 1400", "/tissues/0/fields/0/T2/mean", "twice T1" },

@@ -47,7 +47,7 @@ internal sealed record FlagShape : Shape;
 /// <param name="Item">What each item is.</param>
 /// <param name="Minimum">Fewest items.</param>
 /// <param name="Maximum">Most items.</param>
-/// <param name="Identity">Keys that tell items apart and follow them through versions; empty when the position does.</param>
+/// <param name="Identity">Keys that tell items apart and follow them through versions; one empty key when the item's own value does, no key when the position does.</param>
 /// <param name="Distinct">False when items of the same identity may repeat and are told apart by their order.</param>
 internal sealed record ListShape(Shape Item, int Minimum, int Maximum, IReadOnlyList<string> Identity, bool Distinct = true) : Shape;
 

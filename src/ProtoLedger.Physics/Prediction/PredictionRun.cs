@@ -49,7 +49,8 @@ internal sealed unsafe class PredictionRun
     internal void Run()
     {
         var lanes = _peaks.Lanes;
-        var t2 = _program.DecaysWithT2Star && _program.Closure != Closure.RfSpoiled ? lanes.T2Star : lanes.T2;
+        var starAfterT2 = _program.DecaysWithT2Star && _program.Closure == Closure.Longitudinal && _series.Preparations.Any(p => p is T2Preparation);
+        var t2 = _program.DecaysWithT2Star && _program.Closure != Closure.RfSpoiled && !starAfterT2 ? lanes.T2Star : lanes.T2;
         double[] columns = _program.Maps.Count == 0 ? [] : new double[2 * _program.Maps.Count * lanes.Count];
         MapColumns.Fill(_program, _series.Readout, _setting, _peaks, columns);
         fixed (double* t1 = lanes.T1, transverse = t2, b1 = lanes.B1Scale, maps = columns)
@@ -77,6 +78,18 @@ internal sealed unsafe class PredictionRun
             else
                 RunCrossing(arguments);
         }
+
+        if (starAfterT2)
+            FromT2ToT2Star();
+    }
+
+    /// <summary>A T2 preparation refocuses, so it decays with T2; the gradient echoes after it decay with T2* from their pulse on.</summary>
+    private void FromT2ToT2Star()
+    {
+        var count = _peaks.Lanes.Count;
+        FromT2ToT2Star(_program.EchoTimes[_program.EffectiveEcho], Signed);
+        for (var e = 0; e * count < Samples.Length; e++)
+            FromT2ToT2Star(_program.EchoTimes[e], Samples.AsSpan(e * count, count));
     }
 
     private void RunCrossing(in EngineArguments arguments)
@@ -91,7 +104,12 @@ internal sealed unsafe class PredictionRun
             for (var e = _allEchoes ? _program.EchoTimes.Length - 1 : 0; e >= 0; e--)
             {
                 CrossingRun.Run(_series.Readout, _program.EchoTimes[e], arguments, frequency, _width);
-                FromT2ToT2Star(_program.EchoTimes[e]);
+                if (_program.DecaysWithT2Star)
+                {
+                    FromT2ToT2Star(_program.EchoTimes[e], Signed);
+                    FromT2ToT2Star(_program.EchoTimes[e], Period);
+                }
+
                 if (QuadratureSamples is null)
                     continue;
                 Signed.CopyTo(Samples, e * lanes.Count);
@@ -101,18 +119,13 @@ internal sealed unsafe class PredictionRun
     }
 
     /// <summary>States that cross a repetition time dephase and rephase with T2; from the pulse to the echo of a spoiled gradient echo T2* counts, where it is known.</summary>
-    private void FromT2ToT2Star(double echo)
+    private void FromT2ToT2Star(double echo, Span<double> column)
     {
-        if (!_program.DecaysWithT2Star)
-            return;
         var lanes = _peaks.Lanes;
-        for (var i = 0; i < lanes.Count; i++)
+        for (var i = 0; i < column.Length; i++)
         {
-            if (double.IsNaN(lanes.T2Star[i]))
-                continue;
-            var factor = Kernels.Elementary.Exp(echo * (1 / lanes.T2[i] - 1 / lanes.T2Star[i]));
-            Signed[i] *= factor;
-            Period[i] *= factor;
+            if (!double.IsNaN(lanes.T2Star[i]))
+                column[i] *= Kernels.Elementary.Exp(echo * (1 / lanes.T2[i] - 1 / lanes.T2Star[i]));
         }
     }
 }

@@ -44,6 +44,7 @@ internal static class Probes
         yield return Of(new SpoiledGradientEchoTrain(2300, 3, 9, 7, 176, EncodingOrder.Linear), inversion with { InversionTime = 900, End = InversionTimeEnd.KSpaceCentre });
         yield return Of(new DiffusionSpinEcho(6000, 80, 90, 180, 1000));
         yield return Of(new SpinEcho(3000, 60, 90, 180), new T2Preparation(50));
+        yield return Of(new SpoiledGradientEchoTrain(1500, 2, 12, 5, 40, EncodingOrder.Centric), new T2Preparation(40));
         yield return Of(new SpinEcho(3000, 60, 90, 180), new SpectralSaturation(new GaussianPulse("gaussian", 100, 8, 0.17), 4)) with { Timing = new SeriesTiming(20) };
         yield return Of(train with { RepetitionTime = 5000 }, new SpectralInversion(120, new GaussianPulse("gaussian", 180, 10, 0.17))) with { Timing = new SeriesTiming(10) };
         yield return Of(train with { RepetitionTime = 1500 }) with { Timing = new SeriesTiming(State: StartState.FirstShot) };

@@ -14,7 +14,8 @@ public static class SignalPredictor
     /// <returns>Finite values for every lane.</returns>
     /// <exception cref="ArgumentException">A value of the series or of a lane is outside its range, or a lane lacks what the readout needs; the message names the field, the value and the limit.</exception>
     /// <remarks>
-    /// Lanes are independent: a lane's bits do not depend on the others, on the instruction set, or on the number of threads.
+    /// Lanes are independent: a lane's bits do not depend on the others, on the instruction set, or on the number of threads; only where 64 or more lanes meet
+    /// a spectral pulse at one point of the fields do they share its integration, within 10⁻¹⁰ of each one's own.
     /// Spins that missed the preparations are predicted from equilibrium and mixed in signed; the magnitude is taken last.
     /// </remarks>
     public static SignalTable Predict(

@@ -165,6 +165,12 @@ public sealed class ContrastEditsTests
 
         Approximately.Relative(Math.Exp(-20 / White3.T2), BeforeExcitation(At(60), White3) / BeforeExcitation(At(40), White3), 1e-9);
         Assert.True(BeforeExcitation(At(60), Fluid3) / BeforeExcitation(At(40), Fluid3) > 0.98);
+
+        // Before gradient echoes too it is T2 that counts, and T2* only from the excitation on.
+        Series Gradient(double time) => Of(new SpoiledGradientEcho(60_000, 10, 90, []), new T2Preparation(time, 4, 0));
+        Approximately.Relative(Math.Exp(-20 / White3.T2), Signed(Gradient(60), White3) / Signed(Gradient(40), White3), 1e-9);
+        Approximately.Relative(
+            White3.ProtonDensity * Math.Exp(-10 / White3.T2Star!.Value), Signed(Gradient(40), White3) / BeforeExcitation(Gradient(40), White3), 1e-9);
     }
 
     /// <summary>

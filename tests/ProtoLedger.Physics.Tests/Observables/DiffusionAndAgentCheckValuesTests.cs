@@ -27,6 +27,38 @@ public sealed class DiffusionAndAgentCheckValuesTests
         Approximately.Relative(expected, BValue.Trapezoids(amplitude, duration, separation, ramp), 1e-9);
     }
 
+    /// <summary>PD exp(−TE/T2) exp(−b ADC) at TE 80, b 0 and 1000 (Stejskal, Tanner 1965): white and grey matter, facilitated and acute lesion, fluid.</summary>
+    [Theory]
+    [InlineData(0.70, 80, 0.70, 0.257516, 0.127878)]
+    [InlineData(0.82, 100, 0.89, 0.368450, 0.151306)]
+    [InlineData(0.85, 150, 1.2, 0.498649, 0.150190)]
+    [InlineData(0.80, 110, 0.40, 0.386580, 0.259132)]
+    [InlineData(1, 2000, 3.0, 0.960789, 0.0478349)]
+    public void Signal_OfDiffusionWeighting(double density, double t2, double coefficient, double plain, double weighted)
+    {
+        var tissue = new Tissue("tissue", 900, t2, null, density, coefficient);
+
+        Approximately.Relative(plain, DiffusionSignal(80, 0, tissue), 1e-5);
+        Approximately.Relative(weighted, DiffusionSignal(80, 1000, tissue), 1e-5);
+        Approximately.Relative(coefficient, Math.Log(DiffusionSignal(80, 0, tissue) / DiffusionSignal(80, 1000, tissue)), 1e-4);
+    }
+
+    /// <summary>Shine-through, equal density and coefficient, T2 150 against 80 ms: exp(TE (1/80 − 1/150)); evened out where b ΔADC is its logarithm.</summary>
+    [Theory]
+    [InlineData(80, 1.59467)]
+    [InlineData(60, 1.41907)]
+    public void Signal_OfLongT2_ShinesThrough(double echoTime, double expected)
+    {
+        var (bright, plain) = (new Tissue("bright", 900, 150, null, 0.8, 0.9), new Tissue("plain", 900, 80, null, 0.8, 0.9));
+
+        Approximately.Relative(expected, DiffusionSignal(echoTime, 1000, bright) / DiffusionSignal(echoTime, 1000, plain), 1e-5);
+        var faster = bright with { ApparentDiffusionCoefficient = 0.9 + Math.Log(expected) };
+        Approximately.Relative(1, DiffusionSignal(echoTime, 1000, faster) / DiffusionSignal(echoTime, 1000, plain), 1e-5);
+    }
+
+    private static double DiffusionSignal(double echoTime, double b, Tissue tissue) => Signals.Signed(
+        Signals.Of(new DiffusionSpinEcho(5000, echoTime, 90, 180, b)) with { Timing = new SeriesTiming(State: StartState.FirstShot) }, tissue);
+
     [Fact]
     public void Trapezoids_ThatOverlap_AreRefused()
     {

@@ -8,6 +8,7 @@ using ProtoLedger.Application.Documents;
 using ProtoLedger.Application.History;
 using ProtoLedger.Application.Importing;
 using ProtoLedger.Application.Predictions;
+using ProtoLedger.Application.Repairs;
 using ProtoLedger.Application.Reporting;
 using ProtoLedger.Application.Runs;
 using ProtoLedger.Application.Site;
@@ -36,7 +37,7 @@ public static class ApplicationServices
         typeof(CreateChangeRequest), typeof(EditChangeRequest), typeof(SubmitChangeRequest), typeof(WithdrawChangeRequest),
         typeof(DeclineChangeRequest), typeof(ApproveChangeRequest), typeof(RebaseChangeRequest), typeof(MakeEffective),
         typeof(ReadChangeRequests), typeof(AddComment), typeof(ReadDocuments), typeof(ReadRuns), typeof(EnqueueRun), typeof(ReadLedger), typeof(ReadAudit), typeof(AuditLedger), typeof(RecordLoading), typeof(ExportBundle), typeof(PrepareSite),
-        typeof(PredictSeries), typeof(RecordDenial), typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(SetSecondFactor), typeof(KeepTokens), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
+        typeof(PredictSeries), typeof(OfferRepairs), typeof(CarryProtocolOver), typeof(RecordDenial), typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(SetSecondFactor), typeof(KeepTokens), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
         typeof(ImportStore), typeof(PrepareDemo), typeof(RunWorker), typeof(ChangeReports), typeof(CompareRuns),
     ];
 }

@@ -49,6 +49,9 @@ internal sealed class RunDocuments
     /// <exception cref="InvalidOperationException">There is none.</exception>
     public HashedDocument<ScannerDocument> Scanner(string id) => Find<ScannerDocument>(DocumentKind.Scanner, id);
 
+    /// <summary>Whether a scanner is in the baseline.</summary>
+    public bool HasScanner(string id) => baseline.ContainsKey((DocumentKind.Scanner, id));
+
     /// <summary>The conditions that a protocol names.</summary>
     public HashedDocument<ConditionsDocument> Conditions(string id) => Find<ConditionsDocument>(DocumentKind.Conditions, id);
 

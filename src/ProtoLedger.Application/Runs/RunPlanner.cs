@@ -12,9 +12,13 @@ namespace ProtoLedger.Application.Runs;
 internal static class RunPlanner
 {
     /// <summary>The plan of a run as of now.</summary>
-    public static async Task<RunPlan> PlanAsync(IStores stores, RunRow run, DateTime now, CancellationToken cancellationToken)
+    /// <param name="stores">Stores.</param>
+    /// <param name="changeRequestId">Request whose document stands in the baseline, or null.</param>
+    /// <param name="now">UTC.</param>
+    /// <param name="cancellationToken">Stops it.</param>
+    public static async Task<RunPlan> PlanAsync(IStores stores, long? changeRequestId, DateTime now, CancellationToken cancellationToken)
     {
-        var request = run.ChangeRequestId is { } id ? await stores.ChangeRequests.FindAsync(id, forUpdate: false, cancellationToken) : null;
+        var request = changeRequestId is { } id ? await stores.ChangeRequests.FindAsync(id, forUpdate: false, cancellationToken) : null;
         var effective = (await stores.Facts.EffectiveAtAsync(now, cancellationToken))
             .GroupBy(interval => interval.Key)
             .ToDictionary(group => group.Key, group => group.Max(interval => interval.Version));

@@ -141,7 +141,7 @@ public sealed class RunWorker
             async stores =>
             {
                 var run = (await stores.Runs.FindAsync(job.Run, cancellationToken))!;
-                var plan = await RunPlanner.PlanAsync(stores, run, now, cancellationToken);
+                var plan = await RunPlanner.PlanAsync(stores, run.ChangeRequestId, now, cancellationToken);
                 var shards = plan.Subjects.Select(subject => subject.Protocol).Distinct().ToList();
                 return await stores.Runs.PlanAsync(job, ModelIdentity.Current, plan.ToBytes(), shards, now, cancellationToken);
             },

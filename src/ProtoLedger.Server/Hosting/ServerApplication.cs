@@ -12,6 +12,7 @@ using ProtoLedger.Server.Features.Documents;
 using ProtoLedger.Server.Features.Health;
 using ProtoLedger.Server.Features.Ledger;
 using ProtoLedger.Server.Features.Predictions;
+using ProtoLedger.Server.Features.Repairs;
 using ProtoLedger.Server.Features.Runs;
 using ProtoLedger.Server.Features.Sessions;
 using ProtoLedger.Server.Http;
@@ -92,6 +93,7 @@ internal static class ServerApplication
         {
             app.MapSessions();
             app.MapPredictions();
+            app.MapRepairs();
             app.MapChangeRequests();
             app.MapReports();
             app.MapDocuments();

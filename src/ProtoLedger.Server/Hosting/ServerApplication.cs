@@ -6,6 +6,7 @@ using ProtoLedger.Application.Site;
 using ProtoLedger.Protocols.Canonical;
 using ProtoLedger.Server.Features.Accounts;
 using ProtoLedger.Server.Features.Audit;
+using ProtoLedger.Server.Features.Bundles;
 using ProtoLedger.Server.Features.ChangeRequests;
 using ProtoLedger.Server.Features.Documentation;
 using ProtoLedger.Server.Features.Documents;
@@ -67,7 +68,7 @@ internal static class ServerApplication
         services.TryAddSingleton(TimeProvider.System);
         services.AddSingleton<Readiness>();
         services.AddProtoLedgerStorage(database.ConnectionString);
-        services.AddProtoLedgerApplication(new SiteOptions(options.SiteName, options.Origin, SealingKey.Read(options)));
+        services.AddProtoLedgerApplication(new SiteOptions(options.SiteName, options.Origin, SealingKeyFile.Read(options.SealingKeyFile ?? Path.Combine(options.DataFolder, SealingKeyFile.UsualName))));
         services.AddSingleton(options);
         services.AddSingleton<FirstStart>();
         services.AddSingleton<DemoPeople>();
@@ -101,6 +102,7 @@ internal static class ServerApplication
             app.MapLedger();
             app.MapAudit();
             app.MapAccounts();
+            app.MapBundles();
             app.MapApiDescription();
             app.MapProblemPages();
         }

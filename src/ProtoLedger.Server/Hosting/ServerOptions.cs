@@ -1,4 +1,5 @@
 using System.ComponentModel.DataAnnotations;
+using ProtoLedger.Application.Site;
 
 namespace ProtoLedger.Server.Hosting;
 
@@ -33,12 +34,12 @@ internal sealed class ServerOptions
     /// <summary>Name of the site, as its certificates show it.</summary>
     [Required]
     [StringLength(60, MinimumLength = 1)]
-    public string SiteName { get; set; } = "ProtoLedger site";
+    public string SiteName { get; set; } = SiteOptions.UsualName;
 
     /// <summary>Origin line of the checkpoints; no white space, no plus sign.</summary>
     [Required]
     [RegularExpression(@"[^\s+]{1,100}")]
-    public string Origin { get; set; } = "protoledger.invalid/ledger";
+    public string Origin { get; set; } = SiteOptions.UsualOrigin;
 
     /// <summary>File of the key under which the site's own private keys are sealed; null for sealing.key in the data folder.</summary>
     public string? SealingKeyFile { get; set => field = Filled(value); }

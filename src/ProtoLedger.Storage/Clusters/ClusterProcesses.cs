@@ -45,6 +45,13 @@ internal static class ClusterProcesses
         }
     }
 
+    /// <summary>Kills every process of a folder at once.</summary>
+    public static void KillAll(string pgData)
+    {
+        foreach (var id in Leftovers(pgData))
+            End(id);
+    }
+
     private static List<int> Leftovers(string pgData) =>
         Directory.Exists("/proc")
             ? [.. Directory.EnumerateDirectories("/proc")

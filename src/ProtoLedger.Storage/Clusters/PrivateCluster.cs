@@ -81,6 +81,14 @@ public sealed class PrivateCluster : IAsyncDisposable
         }
     }
 
+    /// <summary>Kills every PostgreSQL process of a data folder as a power cut would; for tests of recovery.</summary>
+    /// <param name="dataFolder">The folder.</param>
+    public static void KillEverything(string dataFolder)
+    {
+        foreach (var pgData in Directory.EnumerateDirectories(Path.GetFullPath(dataFolder), "postgresql-*"))
+            ClusterProcesses.KillAll(pgData);
+    }
+
     /// <summary>Makes a database when it is missing.</summary>
     /// <param name="database">Name; letters, digits and underscores.</param>
     /// <param name="cancellationToken">Gives up.</param>

@@ -1,17 +1,20 @@
 using System.Security.Cryptography;
 
-namespace ProtoLedger.Server.Hosting;
+namespace ProtoLedger.Application.Site;
 
 /// <summary>The key under which the site's own private keys are sealed: a file that only this account reads, never in the database.</summary>
-internal static class SealingKey
+public static class SealingKeyFile
 {
     private const int Length = 32;
 
+    /// <summary>Name of the file in a data folder where no other file is given.</summary>
+    public const string UsualName = "sealing.key";
+
     /// <summary>Reads the key; makes it at the very first start.</summary>
+    /// <param name="file">The file; its folder is made when it is missing.</param>
     /// <exception cref="InvalidDataException">The file does not hold a key.</exception>
-    public static byte[] Read(ServerOptions options)
+    public static byte[] Read(string file)
     {
-        var file = options.SealingKeyFile ?? Path.Combine(options.DataFolder, "sealing.key");
         if (!File.Exists(file))
             Make(file);
         var key = File.ReadAllBytes(file);

@@ -1,9 +1,10 @@
 using ProtoLedger.Physics.Acquisition;
+using ProtoLedger.Physics.Observables;
 using ProtoLedger.Protocols.Documents;
 
 namespace ProtoLedger.Regression.Prediction;
 
-/// <summary>What a technologist can reach within the allowed ranges.</summary>
+/// <summary>What a technologist can reach within the allowed ranges, and what a trigger makes of the repetition time.</summary>
 internal static class AllowedCorners
 {
     private const int FullRanges = 5;
@@ -16,6 +17,21 @@ internal static class AllowedCorners
             var set = corner.Aggregate(series, (s, setting) => SeriesParameters.With(s, setting.Key, setting.Value));
             yield return (corner, set);
         }
+    }
+
+    /// <summary>The document's ranges, and for a triggered series the repetition times that its rates lead to.</summary>
+    internal static IReadOnlyList<AllowedRange> WithTrigger(IReadOnlyList<AllowedRange> ranges, Series series)
+    {
+        const string Pointer = "/readout/RepetitionTime";
+        if (series.Timing.Trigger == SeriesTrigger.None)
+            return ranges;
+        var (shortest, longest) = RepetitionPeriod.Range(series);
+        var set = ranges.FirstOrDefault(r => r.Parameter == Pointer);
+        return
+        [
+            .. ranges.Where(r => r != set),
+            new AllowedRange(Pointer, Math.Min(shortest, set?.Low ?? shortest), Math.Max(longest, set?.High ?? longest)),
+        ];
     }
 
     private static IEnumerable<Dictionary<string, double>> Corners(AllowedRange[] ranges)

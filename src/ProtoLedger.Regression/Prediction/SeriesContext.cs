@@ -16,7 +16,7 @@ namespace ProtoLedger.Regression.Prediction;
 /// <param name="BodyRegion">Region of the protocol.</param>
 /// <param name="ContrastConcentration">mmol/l in enhancing tissue, or null.</param>
 /// <param name="Conditions">B0/B1 conditions.</param>
-/// <param name="AllowedRanges">What the console may change.</param>
+/// <param name="AllowedRanges">What the console may change, and the repetition times to which a trigger leads.</param>
 /// <param name="Draws">Tissue draws.</param>
 internal sealed record SeriesContext(
     string SeriesId,
@@ -39,16 +39,19 @@ internal sealed record SeriesContext(
 
     /// <summary>Context of a series of an input.</summary>
     /// <exception cref="InvalidOperationException">The scanner lacks a pulse that the series names.</exception>
-    internal static SeriesContext Create(EvaluationInput input, ProtocolSeries series, TissueDraws draws) => new(
+    internal static SeriesContext Create(EvaluationInput input, ProtocolSeries series, TissueDraws draws) =>
+        Create(input, series, SeriesMapping.Resolve(series, input.Scanner.Document).Require(), draws);
+
+    private static SeriesContext Create(EvaluationInput input, ProtocolSeries series, Series acquisition, TissueDraws draws) => new(
         series.Id,
-        SeriesMapping.Resolve(series, input.Scanner.Document).Require(),
+        acquisition,
         input.Scanner.Document.MagneticFieldStrength,
         input.Catalogue.Document,
         input.Protocol.Document.AgeGroup,
         input.Protocol.Document.BodyRegion,
         series.ContrastConcentration,
         input.Conditions.Document,
-        series.AllowedRanges,
+        AllowedCorners.WithTrigger(series.AllowedRanges, acquisition),
         draws);
 
     /// <summary>Text that two contexts share exactly when their numbers are equal, the catalogue and the conditions apart.</summary>

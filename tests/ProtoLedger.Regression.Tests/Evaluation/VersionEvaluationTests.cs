@@ -75,6 +75,17 @@ public sealed class VersionEvaluationTests
         Assert.Equal((1.0, 1.0, 1.0, 1.0), (outcome.Nominal, outcome.Low, outcome.High, outcome.Probability));
     }
 
+    /// <summary>Beats of 55 to 65 a minute last 1091 to 923 ms; 9000 ms take nine beats of at least 1000 ms or ten shorter ones: 9000 to 10,000 ms.</summary>
+    [Fact]
+    public void Evaluate_TriggeredSeries_IsJudgedOverItsRates()
+    {
+        var triggered = Documents.Brain.Replace("timing: {slices: 26, concatenations: 2}", "timing: {slices: 26, concatenations: 2, trigger: cardiac, heartRate: {low: 55, high: 65}}", StringComparison.Ordinal);
+
+        var outcome = Evaluation.Evaluate(Documents.Input(protocol: triggered)).Expectations.Single(o => o.Expectation.Id == "fluid-dark");
+
+        Assert.Contains(Math.Round(outcome.AllowedRanges!.Settings["/readout/RepetitionTime"]), (double[])[9000, 10_000]);
+    }
+
     [Fact]
     public void Evaluate_AllowedRanges_GiveTheWorstCorner()
     {

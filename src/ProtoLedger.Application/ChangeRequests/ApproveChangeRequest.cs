@@ -59,7 +59,7 @@ public sealed class ApproveChangeRequest(Commands commands, DocumentShelf shelf,
         var (owed, notAllowed) = Owed(command.Actor, row, ChangeRequestViews.Required(document), counting, approval.Meaning);
         if (owed is null)
             return notAllowed!;
-        if (await command.Stores.ChangeRequests.FindReportAsync(row.Id, row.Sha256, row.Round, command.Cancellation) is not { } report)
+        if (await command.Stores.ChangeRequests.FindReportAsync(row.Id, row.Sha256, row.Round, command.Cancellation) is not { } report || report.RunId != row.RunId)
             return new NotReady($"The report on change request {row.Id} is not finished: wait for run {row.RunId}.", row.RunId);
         var (key, cannot) = await signing.OpenAsync(command, approval.Passphrase);
         if (key is null)

@@ -23,7 +23,7 @@ internal static class ChangeRequestViews
         return new ChangeRequestView(
             row.Id, row.Key.Kind, row.Key.Id, row.BaseVersion, row.Reason, row.Author, row.AuthorName, row.State, row.RowVersion,
             Convert.ToHexStringLower(row.Sha256), row.CreatedAt, row.SubmittedAt, row.DecidedAt, row.DecidedBy, row.DecisionReason,
-            row.Version, row.Imported, row.RunId, report is not null, Required(shelf.Read(row.Sha256, row.Bytes)),
+            row.Version, row.Imported, row.RunId, report is not null && report.RunId == row.RunId, Required(shelf.Read(row.Sha256, row.Bytes)),
             [.. signatures.Select(signature => View(signature, row))]);
     }
 

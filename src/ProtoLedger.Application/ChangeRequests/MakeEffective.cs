@@ -59,7 +59,19 @@ public sealed class MakeEffective(Commands commands, DocumentShelf shelf, Ledger
 
         await ledger.AppendAsync(command, [.. facts]);
         await command.Stores.Runs.EnqueueAsync(RunCause.Effective, null, RunPriority.Decision, command.Now, command.Cancellation);
+        if (row.Key.Kind != DocumentKind.Protocol && at == command.Now)
+            await RestartReviewsAsync(command);
         return await Proposals.KeepAsync(command, shelf, row);
+    }
+
+    /// <summary>What proposals under review were predicted from is no longer what is effective: their reports are made anew and signatures on the old ones dropped.</summary>
+    private async Task RestartReviewsAsync(Command command)
+    {
+        foreach (var id in await command.Stores.ChangeRequests.UnderReviewAsync(command.Cancellation))
+        {
+            if (await command.Stores.ChangeRequests.FindAsync(id, forUpdate: true, command.Cancellation) is { State: ChangeRequestState.UnderReview } waiting)
+                await SubmitChangeRequest.ReviewAsync(command, shelf, ledger, waiting with { Round = waiting.Round + 1 }, "change-request-recomputed");
+        }
     }
 
     private static (IReadOnlyList<string>? Scanners, Refusal? Refusal) Scanners(LedgerDocument document, IReadOnlyList<string>? wanted)

@@ -1,7 +1,10 @@
 using System.Globalization;
+using System.Text.Json.Nodes;
 using ProtoLedger.Application.Documents;
 using ProtoLedger.Application.Runs;
 using ProtoLedger.Application.Stores;
+using ProtoLedger.Protocols.Canonical;
+using ProtoLedger.Protocols.Comparison;
 using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Regression.Evaluation;
 using ProtoLedger.Regression.Findings;
@@ -78,13 +81,39 @@ internal sealed partial class ReportAssembly(
         return [.. material.Protocols
             .Where(other => other.Document.Id != edited.Id
                 && (other.Document.VariantOf == edited.Id || (edited.VariantOf is { } origin && (other.Document.Id == origin || other.Document.VariantOf == origin))))
-            .Select(other => new UnchangedVariant(other.Document.Id, other.Document.Title, other.Version.Version, Why(other.Document, edited)))];
+            .Select(other => new UnchangedVariant(other.Document.Id, other.Document.Title, other.Version.Version, Why(other.Version, other.Document, edited)))];
     }
 
-    private static string Why(ProtocolDocument other, ProtocolDocument edited) =>
-        other.VariantOf == edited.Id ? $"variant of {edited.Id}; it keeps its own values"
-        : other.Id == edited.VariantOf ? $"{edited.Id} is a variant of it; it keeps its own values"
-        : $"variant of {other.VariantOf} as well; it keeps its own values";
+    /// <summary>How a protocol belongs to the edited one, and which of the edited values it keeps.</summary>
+    private string Why(StoredVersion version, ProtocolDocument other, ProtocolDocument edited)
+    {
+        var bond = other.VariantOf == edited.Id ? $"variant of {edited.Id}"
+            : other.Id == edited.VariantOf ? $"{edited.Id} is a variant of it"
+            : $"variant of {other.VariantOf} as well";
+        var kept = Kept(version, other);
+        return kept.Count == 0 ? $"{bond}; it keeps its own values" : $"{bond}; keeps {string.Join(", ", kept)}";
+    }
+
+    /// <summary>Values of the same series at the places that the edit set, up to five.</summary>
+    private List<string> Kept(StoredVersion version, ProtocolDocument other)
+    {
+        if (material.Base is not { } stood)
+            return [];
+        var tree = JsonNode.Parse(version.Bytes);
+        var kept = new List<string>();
+        foreach (var change in DocumentDifference.Between(stood.Bytes, material.Request.Bytes).Changes.Where(change => change is { Kind: ChangeKind.Set, SeriesId: not null, New: JsonValue }))
+        {
+            var index = other.Series.Select(series => series.Id).ToList().IndexOf(change.SeriesId!);
+            var below = change.Pointer.Split('/', 4);
+            if (index < 0 || below is not ["", "series", _, var rest] || !JsonPointer.TryFind(tree, $"/series/{index}/{rest}", out var value) || value is not JsonValue)
+                continue;
+            kept.Add($"{change.Keyword ?? change.Label} {PlainWords.Setting(value)}{(change.Unit is { Length: > 0 } unit ? " " + unit : "")}");
+            if (kept.Count == 5)
+                break;
+        }
+
+        return kept;
+    }
 
     /// <summary>A moved version in words; proposals and the edited document itself are told elsewhere.</summary>
     private TouchedVersion? Touched(MovedVersion moved)

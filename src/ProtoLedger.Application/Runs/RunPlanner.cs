@@ -59,15 +59,10 @@ internal static class RunPlanner
     private static async Task<IReadOnlyList<ChangeRequestRow>> UnderReviewAsync(IStores stores, CancellationToken cancellationToken)
     {
         var rows = new List<ChangeRequestRow>();
-        var filter = new ChangeRequestFilter(ChangeRequestState.UnderReview, Limit: 200);
-        while (true)
-        {
-            var page = await stores.ChangeRequests.ListAsync(filter, cancellationToken);
-            rows.AddRange(page.Where(row => row.Key.Kind == DocumentKind.Protocol));
-            if (page.Count < filter.Limit)
-                return [.. rows.OrderBy(row => row.Id)];
-            filter = filter with { Before = page[^1].Id };
-        }
+        foreach (var id in await stores.ChangeRequests.UnderReviewAsync(cancellationToken))
+            if (await stores.ChangeRequests.FindAsync(id, forUpdate: false, cancellationToken) is { Key.Kind: DocumentKind.Protocol, State: ChangeRequestState.UnderReview } row)
+                rows.Add(row);
+        return rows;
     }
 
     private static RunDocument Entry(DocumentKey key, int version, byte[] sha256) => new(key.KindWord, key.Id, version, Hex(sha256));

@@ -27,6 +27,10 @@ public interface IChangeRequestStore
     /// <param name="cancellationToken">Stops it.</param>
     Task<IReadOnlyList<ChangeRequestRow>> ListAsync(ChangeRequestFilter filter, CancellationToken cancellationToken);
 
+    /// <summary>Numbers of all requests under review, ascending.</summary>
+    /// <param name="cancellationToken">Stops it.</param>
+    Task<IReadOnlyList<long>> UnderReviewAsync(CancellationToken cancellationToken);
+
     /// <summary>Another request under review for the same document, or null.</summary>
     /// <param name="key">Document.</param>
     /// <param name="except">Number to leave out.</param>

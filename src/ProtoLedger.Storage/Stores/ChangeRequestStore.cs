@@ -32,6 +32,9 @@ internal sealed class ChangeRequestStore(Session session) : IChangeRequestStore
             },
             cancellationToken)).Select(row => row.ToRequest())];
 
+    public Task<IReadOnlyList<long>> UnderReviewAsync(CancellationToken cancellationToken) =>
+        session.QueryAsync<long>(Sql["UnderReview"], null, cancellationToken);
+
     public Task<long?> PendingAsync(DocumentKey key, long except, CancellationToken cancellationToken) =>
         session.FindAsync<long?>(Sql["Pending"], new { kind = key.KindWord, documentId = key.Id, except }, cancellationToken);
 

@@ -71,6 +71,51 @@ public sealed class RunTests(Hospital hospital) : IClassFixture<Hospital>
     }
 
     [Fact]
+    public async Task Run_ForACatalogueEdit_MovesExactlyTheVersionsAtThatField()
+    {
+        await RunAsync();
+        var catalogue = Done(await hospital.Get<ReadDocuments>().VersionAsync(hospital.Physicist, new DocumentKey(DocumentKind.Catalogue, "tissues"), null, default));
+        var tree = System.Text.Json.Nodes.JsonNode.Parse(catalogue.Bytes)!;
+        tree["tissues"]![2]!["fields"]![1]!["T1"]!["mean"] = 4400;
+        var draft = Done(await hospital.Get<CreateChangeRequest>().RunAsync(
+            hospital.Physicist, new NewChangeRequest(DocumentKind.Catalogue, "tissues", 1, System.Text.Encoding.UTF8.GetBytes(tree.ToJsonString()), "fluid, new source"), default));
+        var submitted = Done(await hospital.Get<SubmitChangeRequest>().RunAsync(hospital.Physicist, new ChangeRequestStep(draft.Id, draft.RowVersion), default));
+        await hospital.Get<RunWorker>().DrainAsync(default);
+        var findings = Done(await hospital.Get<CompareRuns>().FindingsAsync(hospital.Technologist, submitted.RunId!.Value, default));
+
+        // Fluid is a tissue of the brain protocol only, and the edit is at 3 T only.
+        var expected = await CountAsync("""
+            SELECT count(*) FROM document
+            WHERE kind = 'protocol' AND id = 'brain' AND convert_from(bytes, 'UTF8')::jsonb -> 'scanners' ? 'three'
+            """);
+        Assert.True(expected > 0);
+        Assert.Equal(expected, findings.Moved.Select(moved => (moved.Result.Protocol, moved.Result.Version)).Distinct().Count());
+        Assert.All(findings.Moved, moved => Assert.Equal(("brain", "three"), (moved.Result.Protocol, moved.Result.Scanner)));
+        Done(await hospital.Get<WithdrawChangeRequest>().RunAsync(hospital.Physicist, new ReasonedStep(draft.Id, submitted.RowVersion, "only a trial"), default));
+    }
+
+    [Fact]
+    public async Task Effective_OfAScannerEdit_RestartsWhatIsUnderReview()
+    {
+        var waiting = await hospital.ReviewedAsync(8150);
+        var scanner = Done(await hospital.Get<ReadDocuments>().VersionAsync(hospital.Physicist, new DocumentKey(DocumentKind.Scanner, "one-five"), null, default));
+        var text = System.Text.Encoding.UTF8.GetString(scanner.Bytes).Replace("Room 1", "Room 2", StringComparison.Ordinal);
+        var draft = Done(await hospital.Get<CreateChangeRequest>().RunAsync(
+            hospital.Physicist, new NewChangeRequest(DocumentKind.Scanner, "one-five", 1, System.Text.Encoding.UTF8.GetBytes(text), "moved"), default));
+        var submitted = Done(await hospital.Get<SubmitChangeRequest>().RunAsync(hospital.Physicist, new ChangeRequestStep(draft.Id, draft.RowVersion), default));
+        await hospital.Get<RunWorker>().DrainAsync(default);
+        var approved = Done(await hospital.Get<ApproveChangeRequest>().RunAsync(
+            hospital.SecondPhysicist, new Approval(draft.Id, submitted.RowVersion, Passphrase), default));
+        Done(await hospital.Get<MakeEffective>().RunAsync(hospital.Physicist, new Effectiveness(draft.Id, approved.RowVersion), default));
+        var restarted = Done(await hospital.Get<ReadChangeRequests>().GetAsync(hospital.Technologist, waiting.Id, default)).Request;
+        Assert.True(restarted.RunId > waiting.RunId);
+        Assert.False(restarted.ReportReady);
+        await hospital.Get<RunWorker>().DrainAsync(default);
+        Assert.True(Done(await hospital.Get<ReadChangeRequests>().GetAsync(hospital.Technologist, waiting.Id, default)).Request.ReportReady);
+        Done(await hospital.Get<WithdrawChangeRequest>().RunAsync(hospital.Technologist, new ReasonedStep(waiting.Id, restarted.RowVersion, "enough"), default));
+    }
+
+    [Fact]
     public async Task Claim_AfterItsLeaseRanOut_FencesTheFirstWorkerOut()
     {
         Done(await hospital.Get<EnqueueRun>().RunAsync(hospital.Physicist, RunCause.Manual, default));

@@ -1,0 +1,4 @@
+SELECT id
+FROM change_request
+WHERE state = 'under review'
+ORDER BY id

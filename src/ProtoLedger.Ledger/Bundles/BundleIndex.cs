@@ -9,12 +9,12 @@ namespace ProtoLedger.Ledger.Bundles;
 /// <param name="Title">For people.</param>
 /// <param name="Scope">What was asked for, in words: protocol, scanner, dates.</param>
 /// <param name="Entries">In file order.</param>
-public sealed record BundleIndex(string Origin, string Title, string Scope, IReadOnlyList<BundleIndex.Item> Entries)
+internal sealed record BundleIndex(string Origin, string Title, string Scope, IReadOnlyList<BundleIndex.Item> Entries)
 {
     private const string Kind = "protoledger-bundle";
 
     /// <summary>The canonical bytes.</summary>
-    internal byte[] ToBytes() => CanonicalJson.Write(new JsonObject
+    public byte[] ToBytes() => CanonicalJson.Write(new JsonObject
     {
         ["format"] = 1,
         ["kind"] = Kind,
@@ -29,7 +29,7 @@ public sealed record BundleIndex(string Origin, string Title, string Scope, IRea
         })]),
     });
 
-    internal static Parsed<BundleIndex> Parse(ReadOnlySpan<byte> bytes)
+    public static Parsed<BundleIndex> Parse(ReadOnlySpan<byte> bytes)
     {
         var owned = bytes.ToArray();
         return Parsed<BundleIndex>.From(() =>
@@ -51,10 +51,10 @@ public sealed record BundleIndex(string Origin, string Title, string Scope, IRea
     /// Text of the note over the list. It has two lines and its first is no origin of a checkpoint, so that neither kind of
     /// note can stand in for the other.
     /// </summary>
-    internal static string NoteText(string origin, ReadOnlySpan<byte> index) => $"{origin} bundle\nsha256 {Digest.Of(index)}\n";
+    public static string NoteText(string origin, ReadOnlySpan<byte> index) => $"{origin} bundle\nsha256 {Digest.Of(index)}\n";
 
     /// <summary>Contents of <see cref="BundleNames.Sums"/> for the other entries.</summary>
-    internal static byte[] Sums(IEnumerable<Item> entries) =>
+    public static byte[] Sums(IEnumerable<Item> entries) =>
         Encoding.ASCII.GetBytes(string.Concat(entries.Where(e => e.Name != BundleNames.Sums).Select(e => $"{e.Hash}  {e.Name}\n")));
 
     /// <summary>One entry.</summary>

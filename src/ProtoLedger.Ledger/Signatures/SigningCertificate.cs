@@ -60,8 +60,6 @@ public sealed class SigningCertificate
 
     internal bool IsAuthority { get; private set; }
 
-    internal int? PathLength { get; private set; }
-
     internal X509KeyUsageFlags? KeyUsage { get; private set; }
 
     internal IReadOnlyList<string> ExtendedKeyUsage { get; private set; } = [];
@@ -164,7 +162,6 @@ public sealed class SigningCertificate
         {
             case X509BasicConstraintsExtension constraints:
                 IsAuthority = constraints.CertificateAuthority;
-                PathLength = constraints.HasPathLengthConstraint ? constraints.PathLengthConstraint : null;
                 break;
             case X509KeyUsageExtension usage:
                 KeyUsage = usage.KeyUsages;

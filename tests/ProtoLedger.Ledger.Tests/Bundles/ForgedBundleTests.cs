@@ -240,6 +240,52 @@ public sealed class ForgedBundleTests : IDisposable
     }
 
     [Fact]
+    public void Verify_ManifestThatDoesNotFitItsPlaceInTheLog_IsNamed()
+    {
+        // Each signed by the right person and recorded by the log's holder.
+        var later = made.Leaves.Count;
+        (Func<SignatureManifest, SignatureManifest> Change, string Words)[] cases =
+        [
+            (m => m with { Checkpoint = new Checkpoint(TestBundle.Origin, later + 1, Digest.Of("x"u8)) }, "but is itself fact"),
+            (m => m with { Checkpoint = new Checkpoint(TestBundle.Origin, 3, made.RootAt(4)) }, "history was rewritten"),
+            (m => m with { Checkpoint = m.Checkpoint with { Origin = "birch.example/protoledger" } }, "another origin"),
+            (m => m with { Time = m.Time.AddHours(1) }, "after its own record"),
+        ];
+        foreach (var (change, words) in cases)
+        {
+            using var bundle = new TestBundle();
+            bundle.Sign(bundle.Site.Physicist, "change-request/19", change);
+            var faults = BundleVerifier.Verify(bundle.ToBytes(), bundle.Trust).Faults;
+            Assert.Contains(words, Assert.Single(faults).Detail, StringComparison.Ordinal);
+        }
+    }
+
+    [Fact]
+    public void Verify_CheckpointOfAnotherOriginOrWithWitnessesOnly_IsNamed()
+    {
+        var contents = made.Contents();
+        var foreign = new Rezip(made.ToBytes())
+            .Set(BundleNames.Checkpoint, made.Log.Sign(new Checkpoint("birch.example", made.Leaves.Count, made.RootAt(made.Leaves.Count))).ToBytes())
+            .Reindex(made.Log).ToBytes();
+        Assert.Contains("its origin is 'birch.example'", BundleVerifier.Verify(foreign, made.Trust).Faults[0].Detail, StringComparison.Ordinal);
+
+        var witness = NoteSigner.WitnessFromSeed("witness.example", new byte[32]);
+        var alone = contents.Checkpoint with { Signatures = [witness.Cosign(contents.Checkpoint, TestSite.Signing)] };
+        var trust = made.Trust with { Keys = [made.Log.PublicKey, witness.PublicKey] };
+        Assert.Contains("only witnesses", BundleVerifier.Verify(made.ToBytes(contents with { Checkpoint = alone }), trust).Faults[0].Detail, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public void Verify_TrustedKeyOfAnotherLog_DoesNotSpeakForThisOne()
+    {
+        // A key that the reader trusts, but under another name than the origin of the log.
+        var other = NoteSigner.Generate("birch.example");
+        var bundle = new Rezip(made.ToBytes()).Set(BundleNames.LogKey, Encoding.UTF8.GetBytes($"{other.PublicKey}\n")).Reindex(other).ToBytes();
+        var report = BundleVerifier.Verify(bundle, made.Trust with { Keys = [made.Log.PublicKey, other.PublicKey] });
+        Assert.Contains("no log key named", report.Faults[0].Detail, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Verify_FromAStream_EqualsFromMemory()
     {
         using var stream = new MemoryStream(made.ToBytes());

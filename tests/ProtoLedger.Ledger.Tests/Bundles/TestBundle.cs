@@ -94,7 +94,8 @@ internal sealed class TestBundle : IDisposable
         }
     }
 
-    private void Sign(TestSite.Signer signer, string subject)
+    /// <summary>Signs, and records the signature in a leaf; <paramref name="change"/> makes a manifest that does not fit its place.</summary>
+    public void Sign(TestSite.Signer signer, string subject, Func<SignatureManifest, SignatureManifest>? change = null)
     {
         var index = leaves.Count;
         var manifest = signer.Manifest(subject) with
@@ -102,6 +103,7 @@ internal sealed class TestBundle : IDisposable
             Artefacts = artefacts.ToDictionary(a => a.Key, a => Digest.Of(a.Value)),
             Checkpoint = new Checkpoint(Origin, index - 1, RootAt(index - 1)),
         };
+        manifest = change?.Invoke(manifest) ?? manifest;
         var (bytes, cms) = (manifest.ToBytes(), signer.Key.Sign(manifest, signer.Certificate));
         Append("signature-given", signer.Certificate.Subject.Account, $"{subject}/signatures/1", new()
         {

@@ -19,9 +19,6 @@ public readonly record struct SliceFit(double BusyTime, int SlicesPerConcatenati
     /// <summary>Whether the slices fit with the concatenations of the series.</summary>
     public bool Fits => Needed <= Available * (1 + 1e-9);
 
-    /// <summary>Time between the excitations of two slices of one concatenation when they are spread evenly, ms.</summary>
-    public double SliceInterval => Available / SlicesPerConcatenation;
-
     /// <summary>Counts what one slice plays.</summary>
     /// <param name="series">The series; a 3D series holds one slab.</param>
     /// <remarks>

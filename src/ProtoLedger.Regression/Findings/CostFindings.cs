@@ -1,4 +1,5 @@
 using System.Globalization;
+using ProtoLedger.Physics.Acquisition;
 using ProtoLedger.Physics.Observables;
 using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Regression.Attribution;
@@ -126,11 +127,32 @@ internal static class CostFindings
 
     private static string Note(ScannerEvidence evidence, ProtocolSeries series, string observable)
     {
-        if (observable != "scanTime" || series.Acquisition.Geometry.Dimensions == 3)
-            return observable is "relativeNoise" or "relativeRfPower" ? "old = 1" : "";
-        var before = evidence.Edit.Before.Protocol.Document.Series.FirstOrDefault(s => s.Id == series.Id)?.Acquisition.Timing.Concatenations;
-        var after = series.Acquisition.Timing.Concatenations;
+        var old = evidence.Edit.Before.Protocol.Document.Series.FirstOrDefault(s => s.Id == series.Id)?.Acquisition;
+        return observable switch
+        {
+            "relativeNoise" when old is not null && ContrastToNoise.WhyNotComparable(old.Geometry, series.Acquisition.Geometry) is { } why => $"old = 1; other reconstruction: {why}",
+            "relativeNoise" or "relativeRfPower" => "old = 1",
+            "scanTime" => string.Join("; ", ((string[])[Concatenations(old, series.Acquisition), Rates(series.Acquisition)]).Where(text => text.Length > 0)),
+            _ => "",
+        };
+    }
+
+    private static string Concatenations(Series? old, Series now)
+    {
+        if (now.Geometry.Dimensions == 3)
+            return "";
+        var (before, after) = (old?.Timing.Concatenations, now.Timing.Concatenations);
         return string.Create(
             CultureInfo.InvariantCulture, $"{after} {(after == 1 ? "concatenation" : "concatenations")}{(before == after ? ", as before" : before is null ? "" : $", before {before}")}");
+    }
+
+    /// <summary>Scan times to which the rates of a triggered series lead; empty where nothing triggers.</summary>
+    private static string Rates(Series series)
+    {
+        if (series.Timing.Trigger == SeriesTrigger.None)
+            return "";
+        var (shortest, longest) = ScanTime.Range(series);
+        return string.Create(
+            CultureInfo.InvariantCulture, $"{shortest:0} to {longest:0} s at {series.Timing.HeartRate.Low} to {series.Timing.HeartRate.High} a minute");
     }
 }

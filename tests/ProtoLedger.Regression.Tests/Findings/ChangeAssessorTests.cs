@@ -35,6 +35,15 @@ public sealed class ChangeAssessorTests
         Assert.Equal("2 concatenations, as before", line.Note);
     }
 
+    /// <summary>Noise of another acceleration rests on a geometry factor that no document knows; the line says so.</summary>
+    [Fact]
+    public void Assess_AccelerationRaised_SaysThatNoiseIsNotComparable()
+    {
+        var line = Assess(("/series/0/geometry/acceleration", 3)).Scanners[0].Balance.Single(b => b.What == "noise");
+
+        Assert.Equal("old = 1; other reconstruction: acceleration 2 against 3: the geometry factor is unknown", line.Note);
+    }
+
     [Fact]
     public void Assess_RenulledInversion_FluidHoldsAndTheCostIsNamed()
     {

@@ -32,7 +32,8 @@ public static class ChangeAssessor
 
     private static ScannerAssessment Assess(VersionEvaluation evaluation, EditOnScanner edit)
     {
-        var old = evaluation.Evaluate(edit.Before);
+        // Before the edit nothing has changed yet: a paired expectation compares that state with itself.
+        var old = evaluation.Evaluate(edit.Before, edit.Before);
         var now = evaluation.Evaluate(edit.After, edit.Before);
         var difference = RunDifference.Between(old, now);
         var attributions = ChangeAttribution.Attribute(evaluation, edit.Before, edit.After, old, now);

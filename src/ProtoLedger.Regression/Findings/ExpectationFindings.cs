@@ -2,6 +2,7 @@ using System.Globalization;
 using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Regression.Drift;
 using ProtoLedger.Regression.Evaluation;
+using ProtoLedger.Regression.Prediction;
 
 namespace ProtoLedger.Regression.Findings;
 
@@ -81,7 +82,9 @@ internal static class ExpectationFindings
 
     private static double Severity(Transition transition, bool worse, ExpectationOutcome old, ExpectationOutcome now) => transition switch
     {
-        Transition.NewlyFails => 100 + 20 * (1 - now.Probability) + 10 * Math.Min(1, Math.Abs(now.Nominal - old.Nominal)),
+        // The number itself comes before its ratio to the old one.
+        Transition.NewlyFails => 100 + 20 * (1 - now.Probability)
+            + (ExpectationJudge.IsPaired(now.Expectation) ? 0 : 10 * Math.Min(1, Math.Abs(now.Nominal - old.Nominal))),
         Transition.NewlyUncertain => worse ? 80 + 10 * (1 - now.Probability) : -20,
         Transition.StillFails => worse ? 60 : 40,
         Transition.StillUncertain => worse ? 50 : 20,
@@ -93,7 +96,7 @@ internal static class ExpectationFindings
     {
         var name = expectation.Observable.Name;
         if (expectation.Basis == ExpectationBasis.Paired || name is "relativeNoise" or "relativeRfPower")
-            return $"{Label(name, subject, against)} becomes {PlainWords.Ratio(now)} of before";
+            return $"{Label(name, subject, against)} becomes {(now < 2 ? $"{PlainWords.Ratio(now)} of" : $"{PlainWords.Ratio(now)} times that of")} before";
         return name switch
         {
             "residualRatio" => PairFindings.Turns(subject!, against!, old, now),

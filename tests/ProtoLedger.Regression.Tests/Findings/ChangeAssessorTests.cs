@@ -28,6 +28,14 @@ public sealed class ChangeAssessorTests
     }
 
     [Fact]
+    public void Assess_PairedExpectation_ComparesWithTheStateBeforeTheEdit()
+    {
+        var finding = Assess(("/series/0/readout/RepetitionTime", 6000)).Scanners.Single(s => s.ScannerId == "three").Findings.Single(f => f.ExpectationId == "no-brighter-fluid");
+        Assert.Equal((Transition.NewlyFails, 1.0), (finding.Transition, finding.Before));
+        Assert.Contains("times that of before", finding.Sentence, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Assess_TimeCut_BalanceSaysScanTimeFalls()
     {
         var line = Assess(("/series/0/readout/RepetitionTime", 6000)).Scanners[0].Balance.Single(b => b.What == "scan time");

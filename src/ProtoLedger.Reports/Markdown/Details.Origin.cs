@@ -48,7 +48,7 @@ internal static partial class Details
 
         page.Table(
             ["Protocol", " Version", "Scanner", "In use", "Moved most", " Old", " New", " Newly failing"],
-            report.Touched.Select(t =>
+            report.Touched.OrderByDescending(t => t.NewlyFails).ThenByDescending(t => t.Effective).Select(t =>
             {
                 var (old, @new) = ReportWords.Values(t.Observable, t.Before, t.After, t.Unit);
                 return (IReadOnlyList<string>)

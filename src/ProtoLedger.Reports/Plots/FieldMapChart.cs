@@ -62,7 +62,7 @@ public static class FieldMapChart
         {
             // The largest B1+ scale stands on top, as on an axis.
             var y = top + (CellHeight * (rows.Count - 1 - r));
-            canvas.Label(Left - 6, y + 17, Numbers.Setting(map.B1Scale[r]), "end");
+            canvas.Label(Left - 6, y + 17, Scale(map.B1Scale[r]), "end");
             for (var c = 0; c < rows[r].Count; c++)
             {
                 var x = Left + (width * c);
@@ -90,9 +90,14 @@ public static class FieldMapChart
     {
         var width = CellWidth(map);
         for (var c = 0; c < map.OffResonanceHz.Count; c++)
-            canvas.Label(Left + (width * (c + 0.5)), bottom + 16, Numbers.Setting(map.OffResonanceHz[c]), "middle");
+            canvas.Label(Left + (width * (c + 0.5)), bottom + 16, Frequency(map.OffResonanceHz[c]), "middle");
         canvas.Label((Left + 700) / 2, bottom + 34, "off-resonance (Hz)", "middle");
     }
+
+    /// <summary>Whole Hz; a grid is not entered anywhere.</summary>
+    private static string Frequency(double hertz) => Numbers.Setting(Math.Round(hertz));
+
+    private static string Scale(double b1) => Numbers.Setting(Math.Round(b1, 2));
 
     private static void Legend(SvgCanvas canvas, FieldMap map, double y, double low, double high)
     {
@@ -125,12 +130,12 @@ public static class FieldMapChart
     private static int Broken(FieldMap map, IReadOnlyList<IReadOnlyList<double>> rows) => rows.Sum(r => r.Count(v => Breaks(map, v)));
 
     private static FigureTable Twin(FieldMap map) => new(
-        ["State", "B1+ scale", .. map.OffResonanceHz.Select(f => $" {Numbers.Setting(f)} Hz")],
+        ["State", "B1+ scale", .. map.OffResonanceHz.Select(f => $" {Frequency(f)} Hz")],
         [.. Rows("before", map.Before, map), .. Rows("after", map.After, map)]);
 
     private static IEnumerable<IReadOnlyList<string>> Rows(string word, IReadOnlyList<IReadOnlyList<double>> rows, FieldMap map) =>
         rows.Select((row, r) => (IReadOnlyList<string>)
         [
-            word, Numbers.Setting(map.B1Scale[r]), .. row.Select(v => Numbers.Plain(v) + (Breaks(map, v) ? " ✕" : "")),
+            word, Scale(map.B1Scale[r]), .. row.Select(v => Numbers.Plain(v) + (Breaks(map, v) ? " ✕" : "")),
         ]);
 }

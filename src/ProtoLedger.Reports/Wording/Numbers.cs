@@ -22,7 +22,7 @@ internal static class Numbers
         var size = Math.Abs(value);
         var decimals = (size >= 9.95 ? 0 : size >= 0.995 ? 1 : 2) + extra;
         var text = Signed(value.ToString("F" + decimals.ToString(CultureInfo.InvariantCulture), CultureInfo.InvariantCulture));
-        return IsZero(text) && size > 1e-9 && extra == 0 ? (value > 0 ? "under 0.01" : "\u22120.00") : text;
+        return IsZero(text) && size > 1e-9 && extra == 0 ? (value > 0 ? "under 0.01" : "about 0") : text;
     }
 
     /// <summary>A number with its sign always shown, for contributions.</summary>

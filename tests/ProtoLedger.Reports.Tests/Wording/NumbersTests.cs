@@ -8,6 +8,7 @@ public sealed class NumbersTests
     [InlineData(0, "0.00")]
     [InlineData(0.05, "0.05")]
     [InlineData(0.004, "under 0.01")]
+    [InlineData(-0.004, "about 0")]
     [InlineData(0.6789, "0.68")]
     [InlineData(1.04, "1.0")]
     [InlineData(9.94, "9.9")]

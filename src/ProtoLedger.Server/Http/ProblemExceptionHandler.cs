@@ -22,6 +22,8 @@ internal sealed class ProblemExceptionHandler(ILogger<ProblemExceptionHandler> l
             StoreUnavailableException => Problems.DatabaseIsAway(),
             NpgsqlException { IsTransient: true } => Problems.DatabaseIsAway(),
             PostgresException { SqlState: [ '5', '7' or '3', ..] } => Problems.DatabaseIsAway(),
+            // Only an address can still carry such a text; bodies are read strictly.
+            PostgresException { SqlState: PostgresErrorCodes.CharacterNotInRepertoire } => Problems.Malformed("The address holds a character that cannot be stored, such as NUL."),
             PostgresException => null,
             NpgsqlException => Problems.DatabaseIsAway(),
             _ => null,

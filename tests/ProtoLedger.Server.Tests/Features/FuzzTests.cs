@@ -10,7 +10,7 @@ namespace ProtoLedger.Server.Tests.Features;
 public sealed class FuzzTests(StoreServerFixture server) : IClassFixture<StoreServerFixture>
 {
     private const int Seed = 20260101;
-    private const int Requests = 3000;
+    private const int Requests = 2000;
 
     private static readonly JsonNode?[] Oddities =
     [
@@ -39,14 +39,15 @@ public sealed class FuzzTests(StoreServerFixture server) : IClassFixture<StoreSe
             using var request = Make(random, method, path, operation);
             var client = random.Next(20) == 0 ? server.Anonymous : await server.AsAsync(people[random.Next(people.Count)]);
             using var answer = await client.SendAsync(request);
+            var sent = request.Content is null ? "" : await request.Content.ReadAsStringAsync();
             var documented = operation["responses"]!.AsObject().Select(r => r.Key);
             // A path parameter that does not fit its constraint is another address: 404 and 405 are always possible, and a parameter may end the path early.
             if (answer.StatusCode >= HttpStatusCode.InternalServerError
                 || !(documented.Contains($"{(int)answer.StatusCode}") || answer.StatusCode is HttpStatusCode.NotFound or HttpStatusCode.MethodNotAllowed or HttpStatusCode.BadRequest or HttpStatusCode.Redirect))
-                faults.Add($"{i}: {method} {request.RequestUri} {(request.Content is null ? "" : await request.Content.ReadAsStringAsync())[..Math.Min(300, (request.Content is null ? "" : await request.Content.ReadAsStringAsync()).Length)]} -> {(int)answer.StatusCode} {await answer.Content.ReadAsStringAsync()}");
+                faults.Add($"{i}: {method} {request.RequestUri} {sent[..Math.Min(300, sent.Length)]} -> {(int)answer.StatusCode} {await answer.Content.ReadAsStringAsync()}");
         }
 
-        Assert.Empty(faults);
+        Assert.True(faults.Count == 0, string.Join('\n', faults));
     }
 
     private static HttpRequestMessage Make(Random random, string method, string path, JsonNode operation)

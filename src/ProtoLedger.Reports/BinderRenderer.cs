@@ -8,7 +8,7 @@ using ProtoLedger.Reports.Wording;
 namespace ProtoLedger.Reports;
 
 /// <summary>A page of a binder.</summary>
-/// <param name="Name">File name.</param>
+/// <param name="Name">File name; <c>index.html</c> stands at the top of a bundle, the others below <c>pages/</c>.</param>
 /// <param name="Content">UTF-8.</param>
 public sealed record BinderPage(string Name, byte[] Content);
 

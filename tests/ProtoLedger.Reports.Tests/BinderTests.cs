@@ -88,7 +88,11 @@ public sealed class BinderTests
         {
             var document = new HtmlParser().ParseDocument(Encoding.UTF8.GetString(page.Content));
             Assert.Empty(document.QuerySelectorAll("script, iframe, link, form"));
-            Assert.All(document.QuerySelectorAll("[href]"), a => Assert.Matches("^[a-z0-9][a-z0-9._/-]*$", a.GetAttribute("href")!));
+            // The first page stands at the top of a bundle, the others below pages/: every link must lead to a file of the bundle.
+            var here = new Uri(page.Name == "index.html" ? "https://bundle/index.html" : $"https://bundle/pages/{page.Name}");
+            string[] files = ["/index.html", "/pages/effective.html", "/pages/changes.html", "/pages/signatures.html", .. SampleBinder.Year.Files.Select(f => "/" + f.Name)];
+            Assert.All(document.QuerySelectorAll("[href]"), a => Assert.Contains(new Uri(here, a.GetAttribute("href")!).AbsolutePath, files));
+            Assert.All(document.QuerySelectorAll("[href]"), a => Assert.DoesNotContain(":", a.GetAttribute("href")!, StringComparison.Ordinal));
         }
     }
 

@@ -25,7 +25,7 @@ public static class ChangeAttribution
         VersionEvaluation evaluation, EvaluationInput before, EvaluationInput after, EvaluationResult old, EvaluationResult now)
     {
         ArgumentNullException.ThrowIfNull(evaluation);
-        var edit = new EditedInput(before, after);
+        var edit = new EditedInput(before, after, evaluation.Mixtures);
         var moved = RunDifference.Between(old, now).Moved
             .Where(m => double.IsFinite(m.OldNominal) && double.IsFinite(m.NewNominal) && RunDifference.HasMoved(m.OldNominal, m.NewNominal))
             .Select(m => m.Observable)

@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using ProtoLedger.Protocols.Comparison;
 using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Regression.Evaluation;
@@ -7,11 +8,15 @@ namespace ProtoLedger.Regression.Attribution;
 /// <summary>Two inputs and every difference between their documents, from which any mixture of the two can be made.</summary>
 internal sealed class EditedInput
 {
-    private readonly Dictionary<DocumentKind, DocumentDifference> differences = [];
+    private readonly Dictionary<DocumentKind, (DocumentDifference Difference, string Name)> differences = [];
+    private readonly ConcurrentDictionary<string, LedgerDocument?> mixtures;
 
-    internal EditedInput(EvaluationInput before, EvaluationInput after)
+    /// <param name="before">The state before.</param>
+    /// <param name="after">The state after.</param>
+    /// <param name="mixtures">Mixtures made so far in this run: an edited catalogue is mixed alike for many series and scanners.</param>
+    internal EditedInput(EvaluationInput before, EvaluationInput after, ConcurrentDictionary<string, LedgerDocument?> mixtures)
     {
-        (Before, After) = (before, after);
+        (Before, After, this.mixtures) = (before, after, mixtures);
         var changes = new List<ChangedParameter>();
         void Add<T>(HashedDocument<T>? old, HashedDocument<T>? now)
             where T : LedgerDocument
@@ -19,7 +24,7 @@ internal sealed class EditedInput
             if (old is null || now is null || old.Sha256 == now.Sha256)
                 return;
             var difference = DocumentDifference.Between(old.CanonicalBytes, now.CanonicalBytes);
-            differences[now.Document.Kind] = difference;
+            differences[now.Document.Kind] = (difference, $"{old.Sha256} {now.Sha256}");
             changes.AddRange(difference.Changes.Select(change => new ChangedParameter(now.Document.Kind, now.Document.Id, change)));
         }
 
@@ -56,13 +61,16 @@ internal sealed class EditedInput
     {
         if (!differences.TryGetValue(old.Document.Kind, out var difference))
             return old;
-        var own = new HashSet<int>();
+        var own = new SortedSet<int>();
         for (var i = 0; i < Changes.Count; i++)
         {
             if (Changes[i].Document == old.Document.Kind && taken.Contains(i))
                 own.Add(Changes[i].Change.Index);
         }
 
-        return difference.Hybrid(own) is ParseResult.Parsed parsed ? HashedDocument.From<T>(parsed) : null;
+        var name = $"{difference.Name} {string.Join(',', own)}";
+        var mixed = mixtures.GetOrAdd(name, _ => difference.Difference.Hybrid(own) is ParseResult.Parsed parsed ? parsed.Document : null);
+        // The name stands for the bytes: a mixture is only predicted, never stored or compared.
+        return mixed is T document ? new(document, name, []) : null;
     }
 }

@@ -1,4 +1,6 @@
 using ProtoLedger.Protocols.Canonical;
+using ProtoLedger.Protocols.Catalogue;
+using ProtoLedger.Protocols.Comparison;
 using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Regression.Evaluation;
 
@@ -31,16 +33,20 @@ internal static class Players
             DocumentKind.Conditions => tokens is ["conditions", ..] && tokens[^1] is not "title",
             DocumentKind.Catalogue => tokens is ["tissues", var index, ..]
                 && !(tokens[^1] is "title" or "source" or "evidence")
-                && tissues.Contains(TissueAt(edit, changed, index)),
+                && IsUsed(edit, changed, tokens, index, tissues),
             _ => false,
         };
     }
 
-    private static string TissueAt(EditedInput edit, ChangedParameter changed, string index)
+    /// <summary>A value of a tissue that the series shows, at the scanner's field where it belongs to one.</summary>
+    private static bool IsUsed(EditedInput edit, ChangedParameter changed, IReadOnlyList<string> tokens, string index, IReadOnlySet<string> tissues)
     {
         // The pointer of what was removed stands in the old document, every other one in the new.
-        var input = changed.Change.Kind == Protocols.Comparison.ChangeKind.Removed ? edit.Before : edit.After;
+        var input = changed.Change.Kind == ChangeKind.Removed ? edit.Before : edit.After;
         var rows = input.Catalogue.Document.Tissues;
-        return int.TryParse(index, out var i) && i < rows.Count ? rows[i].Name : "";
+        if (!int.TryParse(index, out var i) || i >= rows.Count || !tissues.Contains(rows[i].Name))
+            return false;
+        return tokens is not [_, _, "fields", var number, ..] || !int.TryParse(number, out var k) || k >= rows[i].Fields.Count
+            || Math.Abs(rows[i].Fields[k].FieldStrength - input.Scanner.Document.MagneticFieldStrength) <= CatalogueMapping.FieldTolerance;
     }
 }

@@ -14,6 +14,9 @@ public sealed class VersionEvaluation
     private readonly ConcurrentDictionary<SamplePlan, TissueDraws> draws = new();
     private int asked;
 
+    /// <summary>Mixtures of old and new documents that attribution has made in this run.</summary>
+    internal ConcurrentDictionary<string, LedgerDocument?> Mixtures { get; } = new();
+
     /// <summary>Number of series computed so far.</summary>
     public int ComputedSeries => results.Count;
 

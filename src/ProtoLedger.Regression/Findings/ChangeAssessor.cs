@@ -18,7 +18,7 @@ public static class ChangeAssessor
         ArgumentNullException.ThrowIfNull(evaluation);
         ArgumentNullException.ThrowIfNull(scanners);
         var assessed = scanners.Select(edit => Assess(evaluation, edit)).OrderByDescending(s => s.Severity).ThenBy(s => s.ScannerId, StringComparer.Ordinal).ToArray();
-        var changes = scanners.SelectMany(edit => new EditedInput(edit.Before, edit.After).Changes).DistinctBy(c => (c.Document, c.DocumentId, c.Change.Pointer, c.Change.Kind)).ToArray();
+        var changes = scanners.SelectMany(edit => new EditedInput(edit.Before, edit.After, evaluation.Mixtures).Changes).DistinctBy(c => (c.Document, c.DocumentId, c.Change.Pointer, c.Change.Kind)).ToArray();
         var headlines = assessed
             .SelectMany(s => s.Findings)
             .GroupBy(f => (f.SeriesId, f.Observable?.Observable, f.Subject, f.Reference, f.ExpectationId, f.Direction))

@@ -139,4 +139,16 @@ public sealed class ChangeAttributionTests
         var result = Of(Attribute(before, after), "axial-fluid-nulled-t2/signal(csf)@nominal");
         Assert.Equal("RepetitionTime", Assert.Single(Assert.Single(result.Shares).Changes).Change.Name);
     }
+
+    [Fact]
+    public void Attribute_CatalogueEditAtAnotherField_IsNoPlayer()
+    {
+        var before = Documents.Input(expectations: null);
+        var after = Documents.Input(
+            catalogue: Documents.Catalogue
+                .Replace("T1: {mean: 4350, sd: 350", "T1: {mean: 4100, sd: 350", StringComparison.Ordinal)
+                .Replace("T1: {mean: 4300, sd: 400", "T1: {mean: 4000, sd: 400", StringComparison.Ordinal),
+            expectations: null);
+        Assert.Single(Of(Attribute(before, after), "axial-fluid-nulled-t2/signal(csf)@nominal").Shares);
+    }
 }

@@ -1,4 +1,5 @@
 using System.Data;
+using System.Diagnostics;
 using Npgsql;
 using ProtoLedger.Application.Outcomes;
 using ProtoLedger.Application.Stores;
@@ -11,6 +12,9 @@ internal sealed class Transactions(NpgsqlDataSource source, StatementFaults? fau
 {
     /// <summary>Pooled connections break once each after a restart of the database, so a few tries are spent on them.</summary>
     private const int Tries = 4;
+
+    /// <summary>A client is told within a few seconds that the database is away; no try starts later than this.</summary>
+    private static readonly TimeSpan Patience = TimeSpan.FromSeconds(2);
 
     public async Task<T> ReadAsync<T>(Func<IStores, Task<T>> work, CancellationToken cancellationToken) =>
         await TryAsync(
@@ -31,6 +35,7 @@ internal sealed class Transactions(NpgsqlDataSource source, StatementFaults? fau
     private async Task<T> TryAsync<T>(
         IsolationLevel isolation, Func<IStores, CancellationToken, Task<(T Result, bool Commit)>> work, CancellationToken cancellationToken)
     {
+        var started = Stopwatch.GetTimestamp();
         for (var attempt = 1; ; attempt++)
         {
             var committing = false;
@@ -50,15 +55,20 @@ internal sealed class Transactions(NpgsqlDataSource source, StatementFaults? fau
             }
             catch (NpgsqlException exception) when (IsPassing(exception))
             {
-                if (committing || attempt == Tries)
+                if (committing || attempt == Tries || Stopwatch.GetElapsedTime(started) > Patience)
                     throw new StoreUnavailableException("The database cannot be reached.", exception);
             }
         }
     }
 
-    /// <summary>True for a broken or refused connection, and for a transaction that the database gave up in favour of another.</summary>
+    /// <summary>
+    /// True for a broken or refused connection, for a transaction that the database gave up in favour of another, and for a
+    /// database that lacks disk, memory or connections (class 53) or cannot read or write (class 58).
+    /// </summary>
     private static bool IsPassing(NpgsqlException exception) =>
         exception is not PostgresException postgres
         || postgres.SqlState is PostgresErrorCodes.AdminShutdown or PostgresErrorCodes.CrashShutdown or PostgresErrorCodes.CannotConnectNow
-            or PostgresErrorCodes.DeadlockDetected or PostgresErrorCodes.SerializationFailure or PostgresErrorCodes.TooManyConnections;
+            or PostgresErrorCodes.DeadlockDetected or PostgresErrorCodes.SerializationFailure
+        || postgres.SqlState.StartsWith("53", StringComparison.Ordinal)
+        || postgres.SqlState.StartsWith("58", StringComparison.Ordinal);
 }

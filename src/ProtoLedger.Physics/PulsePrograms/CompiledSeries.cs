@@ -22,6 +22,8 @@ internal sealed record PulseMap(Preparation Preparation);
 /// <summary>A series as the engine takes it.</summary>
 internal sealed record CompiledSeries
 {
+    private double[]? _echoTimes;
+
     /// <summary>Structure of one period.</summary>
     public required ProgramPlan Plan { get; init; }
 
@@ -43,8 +45,11 @@ internal sealed record CompiledSeries
     /// <summary>Whether a lane's chemical shift turns the phase of its echoes (gradient echoes).</summary>
     public required bool ShiftTurnsPhase { get; init; }
 
+    /// <summary>The readout.</summary>
+    public required Readout Readout { get; init; }
+
     /// <summary>Times of the samples after their excitation, ms.</summary>
-    public required double[] EchoTimes { get; init; }
+    public double[] EchoTimes => _echoTimes ??= SeriesCompiler.EchoTimes(Readout);
 
     /// <summary>Which sample is the effective echo.</summary>
     public required int EffectiveEcho { get; init; }

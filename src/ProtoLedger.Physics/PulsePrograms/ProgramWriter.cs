@@ -5,33 +5,29 @@ namespace ProtoLedger.Physics.PulsePrograms;
 internal sealed class ProgramWriter(bool writesSteps)
 {
     private readonly List<PulseStep>? _steps = writesSteps ? [] : null;
-    private readonly List<double> _durations = new(8);
-    private readonly List<double> _angles = new(4);
     private readonly List<PulseMap> _maps = [];
+    private double[] _durations = new double[8];
+    private double[] _angles = new double[4];
+    private int _durationCount;
+    private int _angleCount;
 
     internal PulseStep[] Steps => [.. _steps!];
 
-    internal double[] Durations => [.. _durations];
+    /// <summary>One a slot; slots that were not given out follow and mean nothing.</summary>
+    internal double[] Durations => _durations;
 
-    internal double[] Angles => [.. _angles];
+    /// <inheritdoc cref="Durations"/>
+    internal double[] Angles => _angles;
 
     internal IReadOnlyList<PulseMap> Maps => _maps;
 
     internal bool WritesSteps => _steps is not null;
 
     /// <summary>Adds a duration, ms, and returns its slot.</summary>
-    internal int Duration(double time)
-    {
-        _durations.Add(time);
-        return _durations.Count - 1;
-    }
+    internal int Duration(double time) => Add(ref _durations, ref _durationCount, time);
 
     /// <summary>Adds an angle, degrees, and returns its slot.</summary>
-    internal int Angle(double degrees)
-    {
-        _angles.Add(degrees);
-        return _angles.Count - 1;
-    }
+    internal int Angle(double degrees) => Add(ref _angles, ref _angleCount, degrees);
 
     internal void Wait(double time) => Step(StepKind.Wait, Duration(time));
 
@@ -61,5 +57,13 @@ internal sealed class ProgramWriter(bool writesSteps)
             if (samples)
                 Step(StepKind.Sample);
         }
+    }
+
+    private static int Add(ref double[] values, ref int count, double value)
+    {
+        if (count == values.Length)
+            Array.Resize(ref values, 2 * count);
+        values[count] = value;
+        return count++;
     }
 }

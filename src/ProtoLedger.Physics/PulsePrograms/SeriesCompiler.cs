@@ -48,7 +48,7 @@ internal static class SeriesCompiler
             },
             DecaysWithT2Star = readout is SpoiledGradientEcho or SpoiledGradientEchoTrain,
             ShiftTurnsPhase = readout is SpoiledGradientEcho or SpoiledGradientEchoTrain or BalancedGradientEcho,
-            EchoTimes = EchoTimes(readout),
+            Readout = readout,
             EffectiveEcho = effective,
             DiffusionBValue = (readout as DiffusionSpinEcho)?.DiffusionBValue,
         };
@@ -173,7 +173,8 @@ internal static class SeriesCompiler
         _ => 0,
     };
 
-    private static double[] EchoTimes(Readout readout)
+    /// <summary>Times of the echoes of a readout after their excitation, ms.</summary>
+    internal static double[] EchoTimes(Readout readout)
     {
         var times = new double[Echoes(readout)];
         for (var i = 0; i < times.Length; i++)

@@ -47,7 +47,7 @@ public static class Qualifier
                 ? new QualificationCaseResult(testCase.Id, [.. testCase.Question.Select(name => Judge(testCase, name, computed[name]))], null)
                 : new QualificationCaseResult(testCase.Id, [], $"The family {family.Name} has no quantity {missing} for these inputs.");
         }
-        catch (ArgumentException e)
+        catch (Exception e) when (e is ArgumentException or InvalidOperationException)
         {
             return new QualificationCaseResult(testCase.Id, [], e.Message);
         }

@@ -51,15 +51,16 @@ internal sealed class RelaxationSurface
     public static bool Covers(PulseSteps steps, double t1, double t2) =>
         steps.DurationMs <= LargestOverT1 * t1 && steps.DurationMs <= LargestOverT2 * t2;
 
-    /// <summary>Surface of a pulse at a point of the fields; kept for the next call, up to a fixed number.</summary>
+    /// <summary>Surface of a pulse at a point of the fields; kept for the next call; all are forgotten when they become too many.</summary>
     public static RelaxationSurface Of(RfPulse pulse, double b1Scale, double offResonanceHz)
     {
         var key = (pulse, b1Scale, offResonanceHz);
         if (Known.TryGetValue(key, out var surface))
             return surface;
         surface = new RelaxationSurface(PulseSteps.Of(pulse), b1Scale, offResonanceHz);
-        if (Known.Count < Capacity)
-            Known.TryAdd(key, surface);
+        if (Known.Count >= Capacity)
+            Known.Clear();
+        Known.TryAdd(key, surface);
         return surface;
     }
 

@@ -51,6 +51,17 @@ public sealed class InversionMapTests
         Assert.Equal(InversionFailure.Bandwidth, map.WhyAt(1, 400));
     }
 
+    /// <summary>Numbers that docs/physics.md gives as an example; made by the program itself.</summary>
+    [Fact]
+    public void Limits_OfTheDocumentedExample_AreWhatThePageSays()
+    {
+        var (adiabatic, sinc) = (Map(Adiabatic, 1.4).Limits(), Map(Sinc, null).Limits());
+
+        Assert.Equal((636, 0.53), (Math.Round(adiabatic.HighestHz!.Value), Math.Round(adiabatic.LowestB1Scale!.Value, 2)));
+        Assert.Equal((111, 0.86, 1.14), (Math.Round(sinc.HighestHz!.Value), Math.Round(sinc.LowestB1Scale!.Value, 2), Math.Round(sinc.HighestB1Scale!.Value, 2)));
+        Assert.False(Map(Sinc, 1.4).Limits().HoldsNominally);
+    }
+
     [Fact]
     public void Efficiency_KnownAsANumber_FailsNowhere()
     {

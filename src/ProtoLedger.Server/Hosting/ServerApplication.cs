@@ -81,11 +81,14 @@ internal static class ServerApplication
         services.AddExceptionHandler<ProblemExceptionHandler>();
         services.AddProblemDetails();
         services.AddApiDescription();
+        services.AddPages(options);
 
         var app = builder.Build();
         app.UseMiddleware<SecurityHeaders>();
         app.UseExceptionHandler();
-        app.UseStatusCodePages(context => Problems.ForStatus(context.HttpContext.Response.StatusCode, context.HttpContext.Request.Path).ExecuteAsync(context.HttpContext));
+        app.UseStatusCodePages(context => MessagePage.Fits(context.HttpContext)
+            ? MessagePage.WriteAsync(context.HttpContext)
+            : Problems.ForStatus(context.HttpContext.Response.StatusCode, context.HttpContext.Request.Path).ExecuteAsync(context.HttpContext));
         app.UseStaticFiles(new StaticFileOptions { FileProvider = new PhysicalFileProvider(Path.Combine(AppContext.BaseDirectory, "wwwroot")) });
         app.UseRouting();
         app.UseMiddleware<RoleGate>();
@@ -99,12 +102,14 @@ internal static class ServerApplication
             app.MapReports();
             app.MapDocuments();
             app.MapRuns();
+            app.MapRunEvents();
             app.MapLedger();
             app.MapAudit();
             app.MapAccounts();
             app.MapBundles();
             app.MapApiDescription();
             app.MapProblemPages();
+            app.MapPages();
         }
 
         return app;

@@ -21,11 +21,16 @@ internal sealed class RoleGate(RequestDelegate next)
         var rule = endpoint.Metadata.GetMetadata<RoleRule>();
         var address = context.Connection.RemoteIpAddress?.ToString();
         var actor = Actor.Anonymous;
-        if (BearerToken(context.Request) is { } token)
+        var page = endpoint.Metadata.GetMetadata<PageRoute>() is not null;
+        if ((BearerToken(context.Request) ?? CookieToken(context.Request, page)) is { } token)
         {
             if (await authenticate.RunAsync(token, context.RequestAborted) is { } known)
             {
                 actor = known;
+            }
+            else if (page)
+            {
+                SessionCookie.Clear(context.Response);
             }
             else if (rule is not { AllowsAnonymous: true })
             {
@@ -38,7 +43,12 @@ internal sealed class RoleGate(RequestDelegate next)
         if (rule?.Allows(actor) != true)
         {
             await denial.RunAsync(current.Caller, $"{context.Request.Method} {endpoint.RoutePattern.RawText}", rule?.Name ?? "no rule", context.RequestAborted);
-            await Refuse(actor, rule).ExecuteAsync(context);
+            if (page && actor.Credential == Credential.None)
+                context.Response.Redirect(SignInAddress(context.Request));
+            else if (page)
+                context.Response.StatusCode = StatusCodes.Status403Forbidden;
+            else
+                await Refuse(actor, rule).ExecuteAsync(context);
             return;
         }
 
@@ -69,6 +79,15 @@ internal sealed class RoleGate(RequestDelegate next)
     private static string? BearerToken(HttpRequest request) =>
         AuthenticationHeaderValue.TryParse(request.Headers[HeaderNames.Authorization], out var header)
         && header.Scheme.Equals("Bearer", StringComparison.OrdinalIgnoreCase) ? header.Parameter ?? "" : null;
+
+    /// <summary>Forms of pages carry a token of their own; scripts of pages carry a header. Reading needs neither.</summary>
+    private static string? CookieToken(HttpRequest request, bool page) =>
+        page || HttpMethods.IsGet(request.Method) || HttpMethods.IsHead(request.Method) || request.Headers.ContainsKey(SessionCookie.ScriptHeader)
+            ? SessionCookie.Read(request)
+            : null;
+
+    private static string SignInAddress(HttpRequest request) =>
+        HttpMethods.IsGet(request.Method) && request.Path != "/" ? "/sign-in" + QueryString.Create("next", request.Path + request.QueryString) : "/sign-in";
 
     private static string? IdempotencyKey(HttpRequest request)
     {

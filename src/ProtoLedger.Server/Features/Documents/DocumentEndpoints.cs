@@ -12,15 +12,9 @@ namespace ProtoLedger.Server.Features.Documents;
 /// <summary>Stored versions of the five kinds of document, each kind under its own name, and what was effective when.</summary>
 internal static class DocumentEndpoints
 {
-    private static readonly (string Folder, DocumentKind Kind)[] Folders =
-    [
-        ("protocols", DocumentKind.Protocol), ("scanners", DocumentKind.Scanner), ("conditions", DocumentKind.Conditions),
-        ("catalogues", DocumentKind.Catalogue), ("expectations", DocumentKind.Expectations),
-    ];
-
     internal static IEndpointRouteBuilder MapDocuments(this IEndpointRouteBuilder routes)
     {
-        foreach (var (folder, kind) in Folders)
+        foreach (var (folder, kind) in Folders.All)
             MapKind(routes, folder, kind);
         routes.MapGet("/api/v1/effective", EffectiveAsync).WithName("GetEffective").WithTags("Answers")
             .WithSummary("What was effective on a scanner at a time; now where no time is given")

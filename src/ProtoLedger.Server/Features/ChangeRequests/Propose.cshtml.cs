@@ -45,7 +45,7 @@ internal sealed class ProposeModel(ReadDocuments read, CreateChangeRequest creat
 
     /// <summary>Errors that belong to no field of the form.</summary>
     public IReadOnlyList<FieldError> Loose =>
-        [.. errors.Where(error => !Groups.SelectMany(group => group.Fields).Any(field => field.Pointer == error.Pointer))];
+        [.. errors.Where(error => !Groups.SelectMany(group => group.Fields).Any(shown => shown.Pointer == error.Pointer))];
 
     public FieldError? ErrorAt(string pointer) => errors.FirstOrDefault(error => error.Pointer == pointer);
 
@@ -68,7 +68,7 @@ internal sealed class ProposeModel(ReadDocuments read, CreateChangeRequest creat
         var read = Yaml is null ? Edited() : DocumentReader.ReadYaml(Yaml, Key.Kind);
         if (read is not ParseResult.Parsed parsed)
         {
-            errors = [.. ((ParseResult.Refused)read).Errors.Select(error => new FieldError(error.Pointer, error.Value, error.Limit, error.Detail))];
+            errors = [.. ((ParseResult.Refused)read).Errors.Select(error => new FieldError(error.Pointer, error.Value, error.Limit ?? "", error.Detail))];
             return Invalid();
         }
 
@@ -136,11 +136,11 @@ internal sealed class ProposeModel(ReadDocuments read, CreateChangeRequest creat
     {
         var tree = JsonNode.Parse(stored)!;
         var wrong = new List<DocumentError>();
-        var settings = new List<ParameterSetting>();
+        var settings = new List<Protocols.Comparison.ParameterSetting>();
         foreach (var field in Groups.SelectMany(group => group.Fields).Where(field => field.Typed.ReplaceLineEndings("\n") != field.Stored.ReplaceLineEndings("\n")))
         {
             if (Protocols.Canonical.JsonPointer.TryFind(tree, field.Pointer, out var present) && Value(field.Typed, present) is { } value)
-                settings.Add(new ParameterSetting(field.Pointer, value));
+                settings.Add(new Protocols.Comparison.ParameterSetting(field.Pointer, value));
             else
                 wrong.Add(new DocumentError(field.Pointer, field.Typed, "a number with a point, such as 9000 or 9.5; a list is separated by commas", "This is not a number."));
         }

@@ -44,7 +44,7 @@ internal sealed class RequestModel(
 
     public bool MaySubmit => Owns && ChangeRequest.State == ChangeRequestState.Draft;
 
-    public bool MayWithdraw => Owns && ChangeRequest.State is ChangeRequestState.Draft or ChangeRequestState.UnderReview;
+    public bool MayWithdraw => Owns && ChangeRequest.State is (ChangeRequestState.Draft or ChangeRequestState.UnderReview);
 
     public bool MayRebase => MayWithdraw && ChangeRequest.BaseVersion > 0;
 

@@ -7,7 +7,7 @@ namespace ProtoLedger.Server.Features.Sessions;
 
 internal sealed class LeaveSessionModel(SignOut useCase) : LedgerPage
 {
-    public static RoleRule Rule => SignOut.Rule;
+    public static RoleRule Rule => Application.Accounts.SignOut.Rule;
 
     public async Task<IActionResult> OnPostAsync()
     {

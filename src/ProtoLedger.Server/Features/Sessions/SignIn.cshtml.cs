@@ -7,7 +7,7 @@ namespace ProtoLedger.Server.Features.Sessions;
 
 internal sealed class SignInModel(SignIn useCase) : LedgerPage
 {
-    public static RoleRule Rule => SignIn.Rule;
+    public static RoleRule Rule => Application.Accounts.SignIn.Rule;
 
     public string? Name { get; private set; }
 

@@ -15,8 +15,9 @@ internal static class Pages
         services.AddRazorPages(pages => pages.RootDirectory = Root);
         services.AddAntiforgery(forms =>
         {
-            forms.Cookie.Name = "__Host-protoledger-form";
-            forms.Cookie.SecurePolicy = CookieSecurePolicy.Always;
+            // Not bound to https as the session's cookie is: the platform refuses to make a form on plain loopback then.
+            forms.Cookie.Name = "protoledger-form";
+            forms.Cookie.SecurePolicy = CookieSecurePolicy.SameAsRequest;
             forms.Cookie.SameSite = SameSiteMode.Strict;
             forms.FormFieldName = "formToken";
         });

@@ -47,7 +47,7 @@ internal sealed class Forger(TestSite site) : IDisposable
         return key;
     }
 
-    /// <summary>Uses a good person's certificate and key unchanged.</summary>
+    /// <summary>A certificate for the physicist with the deviations set above.</summary>
     public SigningCertificate Certificate()
     {
         var subject = new X500DistinguishedName(SubjectName ?? site.Physicist.Certificate.SubjectName);

@@ -38,6 +38,6 @@ public static class ApplicationServices
         typeof(DeclineChangeRequest), typeof(ApproveChangeRequest), typeof(RebaseChangeRequest), typeof(MakeEffective),
         typeof(ReadChangeRequests), typeof(AddComment), typeof(ReadDocuments), typeof(ReadRuns), typeof(EnqueueRun), typeof(ReadLedger), typeof(ReadAudit), typeof(AuditLedger), typeof(RecordLoading), typeof(ExportBundle), typeof(PrepareSite),
         typeof(PredictSeries), typeof(OfferRepairs), typeof(CarryProtocolOver), typeof(RecordDenial), typeof(SignIn), typeof(Authenticate), typeof(SignOut), typeof(SetSecondFactor), typeof(KeepTokens), typeof(KeepAccounts), typeof(EnrolSigner), typeof(RevokeCertificate),
-        typeof(ImportStore), typeof(PrepareDemo), typeof(RunWorker), typeof(ChangeReports), typeof(CompareRuns),
+        typeof(ImportStore), typeof(PrepareDemo), typeof(RunWorker), typeof(NightlySweep), typeof(ChangeReports), typeof(CompareRuns),
     ];
 }

@@ -21,6 +21,7 @@ public sealed class RunWorker
     private readonly IRunSignal signal;
     private readonly DocumentShelf shelf;
     private readonly ChangeReports reports;
+    private readonly NightlySweep sweep;
     private readonly TimeProvider clock;
     private readonly ILogger<RunWorker> log;
     private readonly string name = $"{Environment.MachineName}:{Environment.ProcessId}:{Guid.NewGuid():N}";
@@ -30,11 +31,12 @@ public sealed class RunWorker
     /// <param name="signal">Wakes it.</param>
     /// <param name="shelf">Documents.</param>
     /// <param name="reports">Makes the report of a proposal.</param>
+    /// <param name="sweep">Queues the night's run.</param>
     /// <param name="clock">Clock.</param>
     /// <param name="log">Log.</param>
     public RunWorker(
-        ITransactions transactions, IRunSignal signal, DocumentShelf shelf, ChangeReports reports, TimeProvider clock, ILogger<RunWorker> log) =>
-        (this.transactions, this.signal, this.shelf, this.reports, this.clock, this.log) = (transactions, signal, shelf, reports, clock, log);
+        ITransactions transactions, IRunSignal signal, DocumentShelf shelf, ChangeReports reports, NightlySweep sweep, TimeProvider clock, ILogger<RunWorker> log) =>
+        (this.transactions, this.signal, this.shelf, this.reports, this.sweep, this.clock, this.log) = (transactions, signal, shelf, reports, sweep, clock, log);
 
     /// <summary>Works until stopped.</summary>
     /// <param name="parallel">Jobs at a time; one for each core.</param>
@@ -92,7 +94,7 @@ public sealed class RunWorker
         {
             try
             {
-                if (!await RunOneAsync(cancellationToken))
+                if (!await RunOneAsync(cancellationToken) && !await sweep.RunWhenDueAsync(cancellationToken))
                     await signal.WaitAsync(Poll, cancellationToken);
             }
             catch (StoreUnavailableException exception)

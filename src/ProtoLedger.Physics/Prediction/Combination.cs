@@ -1,3 +1,4 @@
+using System.Runtime.Intrinsics;
 using ProtoLedger.Physics.Acquisition;
 using ProtoLedger.Physics.Kernels;
 using ProtoLedger.Physics.Observables;
@@ -46,11 +47,18 @@ internal static class Combination
 
     private static void Plain(SignalTable table, LaneTable lanes, PredictionRun run, int echoes)
     {
-        for (var i = 0; i < lanes.Count; i++)
+        var lane = 0;
+        for (; lane <= lanes.Count - Vector512<double>.Count; lane += Vector512<double>.Count)
         {
-            var signed = lanes.ProtonDensity[i] * run.Signed[i];
-            table.Signed[i] = signed;
-            table.Magnitude[i] = Math.Abs(signed);
+            var signed = Vector512.LoadUnsafe(ref lanes.ProtonDensity[lane]) * Vector512.LoadUnsafe(ref run.Signed[lane]);
+            signed.StoreUnsafe(ref table.Signed[lane]);
+            Vector512.Abs(signed).StoreUnsafe(ref table.Magnitude[lane]);
+        }
+
+        for (; lane < lanes.Count; lane++)
+        {
+            table.Signed[lane] = lanes.ProtonDensity[lane] * run.Signed[lane];
+            table.Magnitude[lane] = Math.Abs(table.Signed[lane]);
         }
 
         for (var e = 0; e < echoes; e++)

@@ -210,6 +210,14 @@ public sealed partial class ChangeReportTests
     }
 
     [Fact]
+    public void Meanings_SpelledAsOneWord_AreReadAsWords()
+    {
+        var change = SampleReport.Cut.Changes[0] with { Meaning = "toExcitation", Console = [new ConsoleWording("linden-3t", "TI", "toExcitation")] };
+        var words = Words(Encoding.UTF8.GetString(ReportRenderer.Render(SampleReport.Cut with { Changes = [change], Appearances = [] }).Html));
+        Assert.Contains("(to excitation) 9000 6000 ms “TI” = to excitation on Linden 3 T", words, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void NextSteps_ThatDifferByPlaceOnly_AreOne()
     {
         var step = new ReportStep("enter the new values", "linden-3t", "technologist", "after approval");

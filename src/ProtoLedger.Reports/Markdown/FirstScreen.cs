@@ -148,7 +148,7 @@ internal static partial class FirstScreen
             report.Changes.Select(change => (IReadOnlyList<string>)
             [
                 change.SeriesTitle is { } series ? UserText.Literal(series) : "whole document",
-                ReportWords.Code(change.Parameter) + (change.Meaning is { } meaning ? $" ({UserText.Literal(meaning)})" : ""),
+                ReportWords.Code(change.Parameter) + (change.Meaning is { } meaning ? $" ({ReportWords.Meaning(meaning)})" : ""),
                 change.Old is { } old ? UserText.Literal(old) : "not there",
                 change.New is { } @new ? UserText.Literal(@new) : "removed",
                 change.Unit.Length > 0 ? UserText.Literal(change.Unit) : "–",
@@ -162,7 +162,7 @@ internal static partial class FirstScreen
             : string.Join("; ", change.Console
                 .GroupBy(w => (w.Word, w.Meaning))
                 .Select(g => $"\u201C{UserText.Literal(g.Key.Word)}\u201D"
-                    + (g.Key.Meaning is { } meaning ? $" = {UserText.Literal(meaning)}" : "")
+                    + (g.Key.Meaning is { } meaning ? $" = {ReportWords.Meaning(meaning)}" : "")
                     + $" on {words.Scanners(g.Select(w => w.ScannerId).ToList())}"));
 
     private static void Variants(MarkdownWriter page, ChangeReport report)

@@ -21,6 +21,11 @@ internal sealed class ReportWords(ChangeReport report)
         _ => $"{string.Join(", ", parts.Take(parts.Count - 1))} and {parts[^1]}",
     };
 
+    /// <summary>A meaning as documents spell it, such as <c>toExcitation</c>, in words; other text as it is.</summary>
+    public static string Meaning(string meaning) => meaning.Contains(' ', StringComparison.Ordinal)
+        ? UserText.Literal(meaning)
+        : UserText.Literal(string.Concat(meaning.Select((c, i) => i > 0 && char.IsAsciiLetterUpper(c) && char.IsAsciiLetterLower(meaning[i - 1]) ? $" {char.ToLowerInvariant(c)}" : c.ToString())));
+
     /// <summary>First letter in upper case, a full stop at the end.</summary>
     public static string Sentence(string words)
     {

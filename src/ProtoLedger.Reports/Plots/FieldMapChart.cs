@@ -74,7 +74,7 @@ public static class FieldMapChart
                 {
                     if (Breaks(map, rows[r][c]))
                         canvas.Box(x + (width / 2) - 17, y + 5, 34, 15, $"m{shade}", Colours[shade]);
-                    canvas.Label(x + (width / 2), y + 17, Numbers.Plain(rows[r][c]), "middle");
+                    canvas.Label(x + (width / 2), y + 17, Cell(rows[r][c]), "middle");
                 }
             }
         }
@@ -96,6 +96,9 @@ public static class FieldMapChart
 
     /// <summary>Whole Hz; a grid is not entered anywhere.</summary>
     private static string Frequency(double hertz) => Numbers.Setting(Math.Round(hertz));
+
+    /// <summary>Short enough for a patch: two decimals below 1.</summary>
+    private static string Cell(double value) => Math.Abs(value) < 0.995 ? Numbers.Hundredths(value) : Numbers.Plain(value);
 
     private static string Scale(double b1) => Numbers.Setting(Math.Round(b1, 2));
 
@@ -136,6 +139,6 @@ public static class FieldMapChart
     private static IEnumerable<IReadOnlyList<string>> Rows(string word, IReadOnlyList<IReadOnlyList<double>> rows, FieldMap map) =>
         rows.Select((row, r) => (IReadOnlyList<string>)
         [
-            word, Scale(map.B1Scale[r]), .. row.Select(v => Numbers.Plain(v) + (Breaks(map, v) ? " ✕" : "")),
+            word, Scale(map.B1Scale[r]), .. row.Select(v => Cell(v) + (Breaks(map, v) ? " ✕" : "")),
         ]);
 }

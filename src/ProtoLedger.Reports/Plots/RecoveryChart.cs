@@ -84,18 +84,21 @@ public static class RecoveryChart
         var same = curve.InversionTimeBefore is { } b && curve.InversionTimeAfter is { } a && Math.Abs(a - b) < 1e-9;
         if (same)
         {
-            Mark(curve.InversionTimeAfter, "inversion time, old and new", Stroke.Ink, 16);
+            Mark(curve.InversionTimeAfter, "inversion time, old and new", Stroke.Ink, 16, leftwards: true);
             return;
         }
 
-        Mark(curve.InversionTimeBefore, "old inversion time", Stroke.Ink with { Dashes = Dashed }, 16);
-        Mark(curve.InversionTimeAfter, "new inversion time", Stroke.Ink, 32);
+        // Words stand on the outer side of their line, so that no line crosses them.
+        var shorter = curve.InversionTimeAfter < curve.InversionTimeBefore;
+        Mark(curve.InversionTimeBefore, "old inversion time", Stroke.Ink with { Dashes = Dashed }, 16, leftwards: !shorter);
+        Mark(curve.InversionTimeAfter, "new inversion time", Stroke.Ink, 32, leftwards: shorter);
 
-        void Mark(double? time, string word, Stroke stroke, double at)
+        void Mark(double? time, string word, Stroke stroke, double at, bool leftwards)
         {
             if (time is not { } t || t < x.Low || t > x.High)
                 return;
-            var end = x.At(t) > (Left + Right) / 2;
+            const double room = 210;
+            var end = leftwards ? x.At(t) - Left > room : Right - x.At(t) < room;
             canvas.Line(x.At(t), at - 10, x.At(t), Bottom, stroke);
             canvas.Label(x.At(t) + (end ? -6 : 6), at, $"{word} {Numbers.Setting(t)} ms", end ? "end" : "start", strong: true);
         }

@@ -28,7 +28,8 @@ public static class FieldMapChart
         var height = 30 + (before ? panel + 36 : 0) + panel + 84;
         var canvas = new SvgCanvas(name, 720, height);
         var values = map.Before.Concat(map.After).SelectMany(r => r).ToList();
-        var (low, high) = (values.Min(), values.Max());
+        // The limit belongs to the scale: far from it, small differences stay pale.
+        var (low, high) = (Math.Min(values.Min(), map.Limit ?? values.Min()), Math.Max(values.Max(), map.Limit ?? values.Max()));
         var y = 30.0;
         if (before)
         {

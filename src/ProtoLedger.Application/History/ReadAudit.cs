@@ -33,12 +33,4 @@ public sealed class ReadAudit(Commands commands)
             await commands.RecordAsync(caller, Kind.Action, "audit", "read", "", cancellationToken);
         return outcome;
     }
-
-    /// <summary>Records that something was read or exported which the trail must show.</summary>
-    /// <param name="caller">Who.</param>
-    /// <param name="action">What was done, such as <c>export-bundle</c>.</param>
-    /// <param name="subject">With what.</param>
-    /// <param name="cancellationToken">Stops it.</param>
-    public Task RecordReadAsync(Caller caller, string action, string subject, CancellationToken cancellationToken) =>
-        commands.RecordAsync(caller, action, subject, "read", "", cancellationToken);
 }

@@ -47,11 +47,6 @@ public static class SignalPredictor
     public static SignalTable[] PredictAll(IReadOnlyList<PredictionRequest> requests, int threads)
     {
         ArgumentNullException.ThrowIfNull(requests);
-        return ComputeAll(requests, threads, pruned: true);
-    }
-
-    internal static SignalTable[] ComputeAll(IReadOnlyList<PredictionRequest> requests, int threads, bool pruned)
-    {
         ArgumentOutOfRangeException.ThrowIfLessThan(threads, 1);
         var tables = new SignalTable[requests.Count];
         var errors = new ArgumentException?[requests.Count];
@@ -63,7 +58,7 @@ public static class SignalPredictor
             const int Portion = 8;
             for (var start = Interlocked.Add(ref next, Portion) - Portion; start < tables.Length; start = Interlocked.Add(ref next, Portion) - Portion)
                 for (var i = start; i < Math.Min(start + Portion, tables.Length); i++)
-                    (tables[i], errors[i]) = Try(requests[i], pruned);
+                    (tables[i], errors[i]) = Try(requests[i]);
         }
 
         if (threads == 1 || requests.Count == 1)
@@ -73,11 +68,11 @@ public static class SignalPredictor
         return Array.Find(errors, e => e is not null) is { } error ? throw new ArgumentException(error.Message, error) : tables;
     }
 
-    private static (SignalTable Table, ArgumentException? Error) Try(PredictionRequest request, bool pruned)
+    private static (SignalTable Table, ArgumentException? Error) Try(PredictionRequest request)
     {
         try
         {
-            return (Compute(request.Series, request.Setting, request.Lanes, request.Outputs, pruned, LaneWidth.Machine), null);
+            return (Predict(request.Series, request.Setting, request.Lanes, request.Outputs), null);
         }
         catch (ArgumentException e)
         {

@@ -36,7 +36,12 @@ internal static class ServerApplication
     /// <summary>A builder with the settings read; the database is not touched yet.</summary>
     public static WebApplicationBuilder CreateBuilder(string[] args)
     {
-        var builder = WebApplication.CreateBuilder(new WebApplicationOptions { ContentRootPath = AppContext.BaseDirectory });
+        var builder = WebApplication.CreateBuilder(new WebApplicationOptions
+        {
+            // Named, since pages are looked for in this assembly; in tests another program is the one that was started.
+            ApplicationName = typeof(ServerApplication).Assembly.GetName().Name,
+            ContentRootPath = AppContext.BaseDirectory,
+        });
         builder.Configuration.AddCommandLine(args, Switches);
         builder.Services.AddOptions<ServerOptions>().BindConfiguration(ServerOptions.Section).ValidateDataAnnotations().ValidateOnStart();
         if (builder.Configuration["urls"] is null && builder.Configuration["http_ports"] is null)

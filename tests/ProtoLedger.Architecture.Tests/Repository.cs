@@ -3,7 +3,7 @@ namespace ProtoLedger.Architecture.Tests;
 /// <summary>The source tree under test.</summary>
 internal static class Repository
 {
-    public static string Root { get; } = FindRoot();
+    public static string Root => SourceTree.Root;
 
     /// <summary>Source files of a project, without what the build makes.</summary>
     public static IEnumerable<string> SourcesOf(string project) =>
@@ -16,12 +16,4 @@ internal static class Repository
     public static string Relative(string path) => Path.GetRelativePath(Root, path);
 
     private static bool IsSource(string path) => !path.Split('/').Any(part => part is "obj" or "bin" or "artifacts");
-
-    private static string FindRoot()
-    {
-        for (var folder = new DirectoryInfo(AppContext.BaseDirectory); folder is not null; folder = folder.Parent)
-            if (File.Exists(Path.Combine(folder.FullName, "ProtoLedger.sln")))
-                return folder.FullName;
-        throw new InvalidOperationException("The tests run from inside the source tree.");
-    }
 }

@@ -8,7 +8,7 @@ public sealed class PhysicsTableTests
     [Fact]
     public void Table_InTheDocumentation_IsTheOutputOfTheCommand()
     {
-        var root = Root(AppContext.BaseDirectory);
+        var root = SourceTree.Root;
         var vectors = Path.Combine(root, "tests", "ProtoLedger.Physics.Tests", "Qualification", "Reference");
         string[] files = [.. Directory.GetFiles(vectors, "*.json").Order(StringComparer.Ordinal)];
         using var output = new StringWriter { NewLine = "\n" };
@@ -21,7 +21,4 @@ public sealed class PhysicsTableTests
         Assert.Equal(0, exitCode);
         Assert.Equal(page[start..page.IndexOf(End, StringComparison.Ordinal)], output.ToString());
     }
-
-    private static string Root(string folder) =>
-        File.Exists(Path.Combine(folder, "ProtoLedger.sln")) ? folder : Root(Path.GetDirectoryName(folder)!);
 }

@@ -15,7 +15,7 @@ public sealed class ChangedModelTests(Hospital hospital) : IClassFixture<Hospita
     {
         var before = await RunAsync(() => hospital.Get<RunWorker>().DrainAsync(default));
         Assert.Equal(0, before.Moved);
-        var root = Root();
+        var root = SourceTree.Root;
         foreach (var file in new[] { "Directory.Build.props", "Directory.Packages.props", "global.json", ".editorconfig" })
             File.Copy(Path.Combine(root, file), Path.Combine(folder, file));
         Copy(Path.Combine(root, "src"), Path.Combine(folder, "src"));
@@ -103,16 +103,5 @@ public sealed class ChangedModelTests(Hospital hospital) : IClassFixture<Hospita
         var errors = process.StandardError.ReadToEndAsync();
         await process.WaitForExitAsync();
         Assert.True(process.ExitCode == 0, await output + await errors);
-    }
-
-    private static string Root()
-    {
-        for (var place = new DirectoryInfo(AppContext.BaseDirectory); place is not null; place = place.Parent)
-        {
-            if (File.Exists(Path.Combine(place.FullName, "ProtoLedger.sln")))
-                return place.FullName;
-        }
-
-        throw new InvalidOperationException("The tests run from inside the source tree.");
     }
 }

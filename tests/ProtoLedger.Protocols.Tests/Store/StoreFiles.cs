@@ -10,7 +10,7 @@ internal static class StoreFiles
 {
     private static readonly ConcurrentDictionary<string, ParseResult.Parsed> Parsed = new();
 
-    public static string Folder { get; } = Path.Combine(Root(), "protocol-store");
+    public static string Folder { get; } = SourceTree.Of("protocol-store");
 
     public static IReadOnlyList<HistoryEntry> History { get; } = StoreReader.ReadHistory(Text("history.yaml")).Require();
 
@@ -33,12 +33,4 @@ internal static class StoreFiles
 
     /// <summary>The newest version of every document.</summary>
     public static DocumentSet Newest() => new(History.Where(entry => entry.Version is not null).Select(entry => Read(entry).Document));
-
-    private static string Root()
-    {
-        var folder = new DirectoryInfo(AppContext.BaseDirectory);
-        while (folder is not null && !File.Exists(Path.Combine(folder.FullName, "ProtoLedger.sln")))
-            folder = folder.Parent;
-        return folder?.FullName ?? throw new DirectoryNotFoundException("The tests run outside the repository.");
-    }
 }

@@ -10,7 +10,7 @@ namespace ProtoLedger.Regression.Tests.Store;
 /// <summary>The newest versions of the documents in the repository's protocol store.</summary>
 internal static class StoredDocuments
 {
-    private static readonly string Folder = Path.Combine(Root(), "protocol-store");
+    private static readonly string Folder = SourceTree.Of("protocol-store");
 
     private static readonly Dictionary<(DocumentKind, string), ParseResult.Parsed> Newest = StoreReader
         .ReadHistory(File.ReadAllText(Path.Combine(Folder, "history.yaml"))).Require()
@@ -41,12 +41,4 @@ internal static class StoredDocuments
 
     private static ParseResult.Parsed Read(string path) =>
         Assert.IsType<ParseResult.Parsed>(DocumentReader.ReadYaml(File.ReadAllText(Path.Combine(Folder, path))));
-
-    private static string Root()
-    {
-        var folder = new DirectoryInfo(AppContext.BaseDirectory);
-        while (folder is not null && !File.Exists(Path.Combine(folder.FullName, "ProtoLedger.sln")))
-            folder = folder.Parent;
-        return folder?.FullName ?? throw new DirectoryNotFoundException("The tests run outside the repository.");
-    }
 }

@@ -27,13 +27,7 @@ public sealed partial class WalkthroughTests(DemoServerFixture server) : IClassF
         Assert.True(process.ExitCode == 0, $"{output}\n{trace[^Math.Min(3000, trace.Length)..]}");
     }
 
-    private static string Page()
-    {
-        for (var folder = new DirectoryInfo(AppContext.BaseDirectory); folder is not null; folder = folder.Parent)
-            if (File.Exists(Path.Combine(folder.FullName, "ProtoLedger.sln")))
-                return Path.Combine(folder.FullName, "docs", "walkthrough.md");
-        throw new InvalidOperationException("The tests run from inside the source tree.");
-    }
+    private static string Page() => SourceTree.Of("docs", "walkthrough.md");
 
     [GeneratedRegex("```bash\n(.*?)```", RegexOptions.Singleline)]
     private static partial Regex Block();

@@ -31,7 +31,7 @@ public sealed partial class RouteTests(ServerFixture server) : IClassFixture<Ser
             lines.Add($"| {method} | `{Address(route)}` | {rule.Name} | {string.Join(" | ", cells)} | {(rule.AllowsAnonymous ? "yes" : "no")} |");
         }
 
-        var page = Path.Combine(RepositoryRoot(), "docs", "access.md");
+        var page = SourceTree.Of("docs", "access.md");
         var text = File.ReadAllText(page);
         var expected = Table().Replace(text, m => $"{m.Groups[1].Value}\n{string.Join('\n', lines)}\n{m.Groups[2].Value}");
         if (Environment.GetEnvironmentVariable("PROTOLEDGER_WRITE_DOCS") == "1")
@@ -112,14 +112,6 @@ public sealed partial class RouteTests(ServerFixture server) : IClassFixture<Ser
     private static string Address(RouteEndpoint route) => "/" + Part().Replace(route.RoutePattern.RawText!, "{$1}").Trim('/');
 
     private static IReadOnlyList<string> MethodsOf(RouteEndpoint route) => route.Metadata.GetMetadata<IHttpMethodMetadata>()?.HttpMethods ?? ["GET"];
-
-    private static string RepositoryRoot()
-    {
-        for (var folder = new DirectoryInfo(AppContext.BaseDirectory); folder is not null; folder = folder.Parent)
-            if (File.Exists(Path.Combine(folder.FullName, "ProtoLedger.sln")))
-                return folder.FullName;
-        throw new InvalidOperationException("The tests run from inside the source tree.");
-    }
 
     [GeneratedRegex("(<!-- routes -->)\n.*?\n(<!-- /routes -->)", RegexOptions.Singleline)]
     private static partial Regex Table();

@@ -11,6 +11,7 @@ using ProtoLedger.Protocols.Comparison;
 using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Protocols.Formats;
 using ProtoLedger.Server.Features.Documents;
+using ProtoLedger.Server.Features.Shared;
 using ProtoLedger.Server.Http;
 
 namespace ProtoLedger.Server.Features.ChangeRequests;
@@ -107,7 +108,7 @@ internal sealed class ProposeModel(ReadDocuments read, CreateChangeRequest creat
         Groups = [.. DocumentRows.Of(Key.Kind, stored).Select(group => new FieldGroup(
             group.Title,
             group.Pointer.StartsWith("/series/", StringComparison.Ordinal) ? tree["series"]![int.Parse(group.Pointer["/series/".Length..], CultureInfo.InvariantCulture)]!.ToJsonString() : null,
-            [.. group.Rows.Select(Field)]))];
+            [.. group.Rows.Where(row => !row.Pointer.EndsWith("/kind", StringComparison.Ordinal)).Select(Field)]))];
         return null;
     }
 
@@ -129,7 +130,7 @@ internal sealed class ProposeModel(ReadDocuments read, CreateChangeRequest creat
     }
 
     private FormField Field(DocumentRow row) => new(
-        row.Pointer, row.Label, row.Unit, row.Parameter?.IsNumber == true, row.Parameter?.Words ?? [], row.Value.Length > 40, row.Value,
+        row.Pointer, row.Block, Show.Sentence(row.Label), row.Unit, row.Parameter?.IsNumber == true, row.Parameter?.Low, row.Parameter?.High, row.Parameter?.Words ?? [], row.Value.Length > 40, row.Value,
         typed.GetValueOrDefault(row.Pointer, row.Value));
 
     private ParseResult Edited()
@@ -174,4 +175,4 @@ internal sealed record FieldGroup(string Title, string? Series, IReadOnlyList<Fo
 
 /// <summary>A field of the form.</summary>
 internal sealed record FormField(
-    string Pointer, string Label, string? Unit, bool Number, IReadOnlyList<string> Words, bool Long, string Stored, string Typed);
+    string Pointer, string Block, string Label, string? Unit, bool Number, double? Low, double? High, IReadOnlyList<string> Words, bool Long, string Stored, string Typed);

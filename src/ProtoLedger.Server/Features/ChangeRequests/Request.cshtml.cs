@@ -32,6 +32,9 @@ internal sealed class RequestModel(
 
     public IReadOnlyList<ParameterChange> Changes { get; private set; } = [];
 
+    /// <summary>What would repair what the proposal breaks.</summary>
+    public IReadOnlyList<RepairOffer> Repairs { get; private set; } = [];
+
     public IReadOnlyList<CommentView> Comments { get; private set; } = [];
 
     public IReadOnlyList<string> Scanners { get; private set; } = [];
@@ -56,6 +59,8 @@ internal sealed class RequestModel(
     public bool MayRelease => ChangeRequest.State == ChangeRequestState.Approved && MakeEffective.Rule.Allows(Actor);
 
     public bool MayComment => AddComment.Rule.Allows(Actor) && !ChangeRequest.Imported;
+
+    private bool MayPropose => ChangeRequest is { Kind: DocumentKind.Protocol, State: ChangeRequestState.UnderReview or ChangeRequestState.Declined } && CreateChangeRequest.Rule.Allows(Actor);
 
     private bool Owns => ChangeRequest.Author == Actor.Name;
 
@@ -105,6 +110,8 @@ internal sealed class RequestModel(
         Comments = (await read.CommentsAsync(Caller, id, Cancellation)).Value ?? [];
         if (ChangeRequest.ReportReady && await read.ReportAsync(Caller, id, ReportForm.Html, Cancellation) is { Succeeded: true, Value: var html })
             Report = ReportPage.Fragment(html);
+        if (Report is not null && MayPropose && await read.ReportAsync(Caller, id, ReportForm.Json, Cancellation) is { Succeeded: true, Value: var json })
+            Repairs = RepairOffers.Read(json, ChangeRequest.DocumentId, found.Value.Document, Changes);
         return refusal is null ? Page() : Refuse(refusal);
     }
 

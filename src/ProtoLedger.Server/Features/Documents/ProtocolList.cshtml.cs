@@ -28,7 +28,8 @@ internal sealed class ProtocolListModel(ReadDocuments useCase) : LedgerPage
             return Refuse(found.Refusal);
         Protocols = Find is null ? found.Value : [.. found.Value.Where(Fits)];
         Next = Find is null && found.Value.Count == OnePage ? found.Value[^1].Id : null;
-        return Find is not null && Protocols is [var only] ? LocalRedirect($"/protocols/{only.Id}") : Page();
+        var only = Find is null ? null : Protocols.FirstOrDefault(protocol => protocol.Id == Find) ?? (Protocols.Count == 1 ? Protocols[0] : null);
+        return only is not null ? LocalRedirect($"/protocols/{only.Id}") : Page();
     }
 
     /// <summary>Every word stands somewhere in the title, the identifier or a scanner's name.</summary>

@@ -15,7 +15,8 @@ internal sealed class HomeModel(ReadChangeRequests requests) : LedgerPage
 
     public IReadOnlyList<ChangeRequestView> Own { get; private set; } = [];
 
-    public bool Decides => RoleRule.Sign.Allows(Actor);
+    /// <summary>Whether requests wait for roles of this person.</summary>
+    public bool Decides => RoleRule.Decline.Allows(Actor) || ToDecide.Count > 0;
 
     public bool Proposes => RoleRule.Propose.Allows(Actor);
 
@@ -23,21 +24,23 @@ internal sealed class HomeModel(ReadChangeRequests requests) : LedgerPage
 
     public async Task OnGetAsync()
     {
-        if (Decides)
+        var waiting = new List<Waiting>();
+        foreach (var request in await ListAsync(new ChangeRequestFilter(ChangeRequestState.UnderReview, Limit: 30)))
         {
-            var waiting = new List<Waiting>();
-            foreach (var request in await ListAsync(new ChangeRequestFilter(ChangeRequestState.UnderReview, Limit: 30)))
-            {
-                if (request.Author != Actor.Name)
-                    waiting.Add(new Waiting(request, await WorstAsync(request)));
-            }
-
-            ToDecide = waiting;
+            if (WaitsForMe(request))
+                waiting.Add(new Waiting(request, await WorstAsync(request)));
         }
+
+        ToDecide = waiting;
 
         if (Proposes)
             Own = await ListAsync(new ChangeRequestFilter(Author: Actor.Name, Limit: 12));
     }
+
+    private bool WaitsForMe(ChangeRequestView request) =>
+        request.Author != Actor.Name
+        && (RoleRule.Decline.Allows(Actor)
+            || request.RequiredSignatures.Any(needed => Actor.Roles.Contains(needed.Role) || needed.Deputies.Contains(Actor.Name)));
 
     private async Task<IReadOnlyList<ChangeRequestView>> ListAsync(ChangeRequestFilter filter) =>
         (await requests.ListAsync(Caller, filter, Cancellation)).Value ?? [];

@@ -16,8 +16,18 @@ internal sealed class RunModel(ReadRuns read, CompareRuns compare) : LedgerPage
 
     public RunFindings? Findings { get; private set; }
 
-    public async Task<IActionResult> OnGetAsync(long id)
+    /// <summary>A word that the findings shown must hold, or null.</summary>
+    public string? Only { get; private set; }
+
+    public IReadOnlyList<ChangedVerdict> NewlyFailing => [.. Findings!.NewlyFailing.Where(Fits)];
+
+    public IReadOnlyList<ChangedVerdict> NewlyHolding => [.. Findings!.NewlyHolding.Where(Fits)];
+
+    public IReadOnlyList<MovedVersion> Moved => [.. Findings!.Moved.Where(moved => Fits(moved.Result.Protocol, moved.Result.Scanner))];
+
+    public async Task<IActionResult> OnGetAsync(long id, string? only)
     {
+        Only = string.IsNullOrWhiteSpace(only) ? null : only.Trim();
         var found = await read.GetAsync(Caller, id, Cancellation);
         if (!found.Succeeded)
             return Absent(found.Refusal);
@@ -28,4 +38,8 @@ internal sealed class RunModel(ReadRuns read, CompareRuns compare) : LedgerPage
             Findings = (await compare.FindingsAsync(Caller, id, Cancellation)).Value;
         return Page();
     }
+
+    private bool Fits(ChangedVerdict verdict) => Fits(verdict.Result.Protocol, verdict.Result.Scanner, verdict.Expectation);
+
+    private bool Fits(params string[] texts) => Only is null || texts.Any(text => text.Contains(Only, StringComparison.OrdinalIgnoreCase));
 }

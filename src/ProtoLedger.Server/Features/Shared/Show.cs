@@ -35,6 +35,10 @@ internal static class Show
     public static string Value(JsonNode? value) =>
         value is null ? "" : value is JsonValue single && single.TryGetValue<string>(out var text) ? text : value.ToJsonString();
 
+    /// <summary>With a capital at the start, unless it is a keyword or a symbol such as pH.</summary>
+    public static string Sentence(string text) =>
+        text.Length > 1 && char.IsLower(text[0]) && !char.IsUpper(text[1]) ? char.ToUpperInvariant(text[0]) + text[1..] : text;
+
     /// <summary>First twelve digits of a hash.</summary>
     public static string Short(string sha256) => sha256[..12];
 }

@@ -20,6 +20,27 @@
     return series;
   }
 
+  // What the form's limits already tell; the server checks everything again.
+  function check(input, field) {
+    const { low, high } = input.dataset;
+    if (input.inputMode !== 'decimal') return true;
+    const numbers = input.value.split(',').map(item => item.trim() === '' ? NaN : Number(item));
+    const wrong = numbers.some(Number.isNaN) ? 'Not a number yet.'
+      : low !== undefined && low !== '' && numbers.some(number => number < Number(low)) ? `At least ${low}.`
+      : high !== undefined && high !== '' && numbers.some(number => number > Number(high)) ? `At most ${high}.` : '';
+    field.classList.toggle('invalid', wrong !== '');
+    field.querySelector('.error')?.remove();
+    if (wrong) {
+      const text = document.createElement('p');
+      text.className = 'error';
+      text.id = input.id + '-error';
+      text.textContent = wrong;
+      field.append(text);
+      input.setAttribute('aria-describedby', text.id);
+    }
+    return wrong === '';
+  }
+
   async function predict(series, section, signal) {
     const answer = await fetch('/api/v1/predictions', {
       method: 'POST',
@@ -62,7 +83,7 @@
     table.innerHTML = '<thead><tr><th>Tissue</th><th class="number">Before</th><th class="number">After</th></tr></thead><tbody></tbody>';
     for (const [tissue, result] of after) {
       const row = table.tBodies[0].insertRow();
-      row.insertCell().textContent = tissue;
+      row.insertCell().textContent = tissue.replaceAll('-', ' ');
       for (const number of [before.get(tissue)?.magnitude, result.magnitude]) {
         const cell = row.insertCell();
         cell.className = 'number';
@@ -83,7 +104,7 @@
     if (time === null || String(time) === input.value) return;
     const button = document.createElement('button');
     button.type = 'button';
-    button.textContent = `Set the inversion time to ${time} ms: nulls ${dark} at these values`;
+    button.textContent = `Set the inversion time to ${time} ms: nulls ${dark.replaceAll('-', ' ')} at these values`;
     button.addEventListener('click', () => { input.value = String(time); input.dispatchEvent(new Event('input', { bubbles: true })); input.focus(); });
     live.append(button);
   }
@@ -109,7 +130,9 @@
   document.getElementById('proposal').addEventListener('input', event => {
     const input = event.target.closest('[data-pointer]');
     if (!input) return;
-    input.closest('.field').classList.toggle('changed', input.value !== input.dataset.stored);
+    const field = input.closest('.field');
+    field.classList.toggle('changed', input.value !== input.dataset.stored);
+    if (!check(input, field)) return;
     const section = input.closest('section[data-series]');
     if (!section?.dataset.series || !section.dataset.tissues) return;
     clearTimeout(timer);

@@ -40,7 +40,7 @@ public sealed class JourneyTests(PagesFixture server)
     public async Task Sign_Renulled_BecomesEffectiveAndSaysWhoAndWhy()
     {
         await using var technologist = await server.OpenAsync("t.okafor");
-        await technologist.Propose.OpenAsync("brain-standard");
+        await technologist.Propose.OpenAsync("brain-standard-15");
         await technologist.Propose.Value(Cycle).FillAsync("6000");
         await technologist.Propose.NullingOffer.ClickAsync();
         // Zero of 1 - 2 exp(-TI/T1) + exp(-TR/T1) lies near 1900 ms for T1 of fluid of 4 s and an effective recovery of 6 s less the train.
@@ -57,8 +57,8 @@ public sealed class JourneyTests(PagesFixture server)
         await physicist.Request.MakeEffectiveAsync();
         Assert.Empty(physicist.Wrong);
 
-        await technologist.GoAsync("/protocols/brain-standard");
-        await technologist.Protocol.Why("Axial fluid-nulled T2", "repetition time").ClickAsync();
+        await technologist.GoAsync("/protocols/brain-standard-15");
+        await technologist.Protocol.Why(Cycle).ClickAsync();
         var newest = await technologist.Protocol.Entries.First.InnerTextAsync();
         Assert.Contains("6000 ms", newest, StringComparison.Ordinal);
         Assert.Contains("Save a minute, fluid nulled", newest, StringComparison.Ordinal);
@@ -66,7 +66,7 @@ public sealed class JourneyTests(PagesFixture server)
         Assert.Empty(technologist.Wrong);
 
         await using var reviewer = await server.OpenAsync("r.hallam");
-        await reviewer.GoAsync("/protocols/brain-standard/history");
+        await reviewer.GoAsync("/protocols/brain-standard-15/history");
         Assert.Contains("Signed by Hanna Lindqvist (physicist): approved", await reviewer.Protocol.Entries.First.InnerTextAsync(), StringComparison.Ordinal);
         Assert.Empty(reviewer.Wrong);
     }
@@ -175,7 +175,7 @@ public sealed class JourneyTests(PagesFixture server)
         await person.Propose.Draft.ClickAsync();
         await person.Propose.ErrorAt("/series/0/readout/EchoTime").WaitForAsync();
         Assert.Equal("-4", await person.Propose.Value("/series/0/readout/EchoTime").InputValueAsync());
-        await person.Propose.Value("/series/0/readout/EchoTime").FillAsync("31");
+        await person.Propose.Value("/series/0/readout/EchoTime").FillAsync("36");
         await person.Propose.Draft.ClickAsync();
         await person.Request.Decision.Locator(".state.draft").WaitForAsync();
     }

@@ -11,10 +11,8 @@ internal sealed class ProtocolScreen(IPage page)
 
     public ILocator History => page.GetByRole(AriaRole.Link, new() { Name = "History" });
 
-    /// <summary>The way to who set a value of a series.</summary>
-    public ILocator Why(string series, string parameter) =>
-        page.Locator("section", new() { Has = page.GetByRole(AriaRole.Heading, new() { Name = series, Exact = true }) })
-            .GetByRole(AriaRole.Link, new() { Name = $"since, who, why: {parameter}" }).First;
+    /// <summary>The way to who set a value, when and why.</summary>
+    public ILocator Why(string pointer) => page.Locator($"a[href$='/why?pointer={Uri.EscapeDataString(pointer)}']");
 
     public ILocator Entries => page.Locator("ol.history > li");
 }

@@ -60,10 +60,10 @@ internal sealed class ProposeModel(ReadDocuments read, CreateChangeRequest creat
     }
 
     public async Task<IActionResult> OnPostAsync(
-        string folder, string id, int baseVersion, string[] pointer, string[] value, string? yaml, string? reason, string? then, string? formKey)
+        string folder, string id, int baseVersion, string[] pointer, string?[] value, string? yaml, string? reason, string? then, string? formKey)
     {
         (Reason, Yaml) = (reason, string.IsNullOrWhiteSpace(yaml) ? null : yaml);
-        typed = pointer.Zip(value).GroupBy(pair => pair.First).ToDictionary(pairs => pairs.Key, pairs => pairs.Last().Second);
+        typed = pointer.Zip(value).GroupBy(pair => pair.First).ToDictionary(pairs => pairs.Key, pairs => pairs.Last().Second ?? ""); // The platform binds an empty field as null.
         if (await LoadAsync(folder, id, baseVersion) is { } absent)
             return absent;
         var read = Yaml is null ? Edited() : DocumentReader.ReadYaml(Yaml, Key.Kind);

@@ -56,7 +56,8 @@ public sealed class ApproveChangeRequest(Commands commands, DocumentShelf shelf,
         var document = shelf.Read(row.Sha256, row.Bytes);
         var given = (await command.Stores.ChangeRequests.SignaturesAsync(row.Id, command.Cancellation)).ToList();
         var counting = given.Where(signature => signature.Round == row.Round).ToList();
-        var (owed, notAllowed) = Owed(command.Actor, row, ChangeRequestViews.Required(document), counting, approval.Meaning);
+        var required = await row.RequiredAsync(command.Stores, shelf, command.Cancellation);
+        var (owed, notAllowed) = Owed(command.Actor, row, required, counting, approval.Meaning);
         if (owed is null)
             return notAllowed!;
         if (await command.Stores.ChangeRequests.FindReportAsync(row.Id, row.Sha256, row.Round, command.Cancellation) is not { } report || report.RunId != row.RunId)
@@ -72,10 +73,27 @@ public sealed class ApproveChangeRequest(Commands commands, DocumentShelf shelf,
                 return moved;
             if (await Proposals.FitsAsync(command, shelf, document) is { } unfit)
                 return unfit;
+            if (await OutdatedAsync(command, row) is { } outdated)
+                return outdated;
             var signature = Sign(command, row, report, given.Count + 1, owed, key.Value, checkpoint);
             await command.Stores.ChangeRequests.AddSignatureAsync(signature, command.Cancellation);
-            return await FinishAsync(command, row, document, report, [.. counting, signature], key.Value.Certificate);
+            return await FinishAsync(command, row, required, report, [.. counting, signature], key.Value.Certificate);
         }
+    }
+
+    /// <summary>
+    /// Refused when a document that was dated ahead has come into force since the report's run: the report was computed from others.
+    /// (What becomes effective at once restarts every review by itself.)
+    /// </summary>
+    private static async Task<Refusal?> OutdatedAsync(Command command, ChangeRequestRow row)
+    {
+        var run = await command.Stores.Runs.FindAsync(row.RunId!.Value, command.Cancellation);
+        var later = (await command.Stores.Facts.EffectiveAtAsync(command.Now, command.Cancellation))
+            .FirstOrDefault(interval => interval.Key.Kind != DocumentKind.Protocol && interval.From > run!.QueuedAt);
+        return later is null
+            ? null
+            : new Conflict(
+                $"Version {later.Version} of {later.Key} came into force after the report on change request {row.Id} was computed: its author saves the proposal once more, so that it is computed anew.");
     }
 
     /// <summary>The signature that the actor may give and that is still owed.</summary>
@@ -131,10 +149,10 @@ public sealed class ApproveChangeRequest(Commands commands, DocumentShelf shelf,
     }
 
     private async Task<Outcome<ChangeRequestView>> FinishAsync(
-        Command command, ChangeRequestRow row, LedgerDocument document, ReportRow report, List<SignatureRow> counting, SigningCertificate certificate)
+        Command command, ChangeRequestRow row, IReadOnlyList<RequiredSignature> required, ReportRow report, List<SignatureRow> counting, SigningCertificate certificate)
     {
         var facts = new List<Fact> { SignatureFacts.Of(counting[^1], Subject(row), certificate.ToDer()) };
-        var complete = ChangeRequestViews.Required(document).All(
+        var complete = required.All(
             wanted => counting.Exists(signature => signature.Role == wanted.Role && signature.Meaning == Words(wanted)));
         var kept = row;
         if (complete)

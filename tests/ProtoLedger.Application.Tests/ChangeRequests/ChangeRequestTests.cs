@@ -158,6 +158,25 @@ public sealed class ChangeRequestTests(Hospital hospital) : IClassFixture<Hospit
         Done(await hospital.Get<WithdrawChangeRequest>().RunAsync(hospital.Technologist, new ReasonedStep(draft.Id, again.RowVersion, "enough"), default));
     }
 
+    [Theory]
+    [InlineData("""[{"role":"radiologist","meaning":"clinically-accepted","deputies":["v.osei"]}]""")]
+    [InlineData("""[{"role":"physicist","meaning":"approved","deputies":["v.osei"]}]""")]
+    [InlineData("""[{"role":"technologist","meaning":"approved","deputies":[]}]""")]
+    public async Task Approve_ProposalThatSoftensItsOwnRule_StillNeedsThePhysicist(string rule)
+    {
+        var (newest, document) = await hospital.EditedAsync(tree => tree["requiredSignatures"] = System.Text.Json.Nodes.JsonNode.Parse(rule));
+        var draft = Done(await hospital.Get<CreateChangeRequest>().RunAsync(
+            hospital.Technologist, new NewChangeRequest(DocumentKind.Protocol, "brain", newest, document, "quicker approval"), default));
+        Assert.Contains(draft.RequiredSignatures, wanted => wanted is { Role: Roles.Physicist, Meaning: "approved", Deputies.Count: 0 });
+        var submitted = Done(await hospital.Get<SubmitChangeRequest>().RunAsync(hospital.Technologist, new ChangeRequestStep(draft.Id, draft.RowVersion), default));
+        await hospital.Get<RunWorker>().DrainAsync(default);
+
+        var friend = await hospital.Get<ApproveChangeRequest>().RunAsync(
+            hospital.As("v.osei", Roles.Reviewer), new Approval(draft.Id, submitted.RowVersion, Passphrase, "approved"), default);
+        Refused<Forbidden>(friend);
+        Done(await hospital.Get<WithdrawChangeRequest>().RunAsync(hospital.Technologist, new ReasonedStep(draft.Id, submitted.RowVersion, "enough"), default));
+    }
+
     [Fact]
     public async Task Rebase_AfterAnotherApproval_KeepsBothChanges()
     {

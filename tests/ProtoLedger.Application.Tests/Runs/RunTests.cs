@@ -1,3 +1,5 @@
+using Microsoft.Extensions.DependencyInjection;
+using Microsoft.Extensions.Time.Testing;
 using Npgsql;
 using ProtoLedger.Application.ChangeRequests;
 using ProtoLedger.Application.Documents;
@@ -113,6 +115,30 @@ public sealed class RunTests(Hospital hospital) : IClassFixture<Hospital>
         await hospital.Get<RunWorker>().DrainAsync(default);
         Assert.True(Done(await hospital.Get<ReadChangeRequests>().GetAsync(hospital.Technologist, waiting.Id, default)).Request.ReportReady);
         Done(await hospital.Get<WithdrawChangeRequest>().RunAsync(hospital.Technologist, new ReasonedStep(waiting.Id, restarted.RowVersion, "enough"), default));
+    }
+
+    [Fact]
+    public async Task Approve_AfterConditionsDatedAheadCameIntoForce_AsksForANewReport()
+    {
+        var key = new DocumentKey(DocumentKind.Conditions, "brain");
+        var stored = Done(await hospital.Get<ReadDocuments>().VersionAsync(hospital.Physicist, key, null, default));
+        var tree = System.Text.Json.Nodes.JsonNode.Parse(stored.Bytes)!;
+        tree["title"] = "Brain, from another hour on";
+        var draft = Done(await hospital.Get<CreateChangeRequest>().RunAsync(
+            hospital.Physicist, new NewChangeRequest(key.Kind, key.Id, stored.Summary.Version, System.Text.Encoding.UTF8.GetBytes(tree.ToJsonString()), "renamed"), default));
+        var submitted = Done(await hospital.Get<SubmitChangeRequest>().RunAsync(hospital.Physicist, new ChangeRequestStep(draft.Id, draft.RowVersion), default));
+        await hospital.Get<RunWorker>().DrainAsync(default);
+        var approved = Done(await hospital.Get<ApproveChangeRequest>().RunAsync(
+            hospital.SecondPhysicist, new Approval(draft.Id, submitted.RowVersion, Passphrase), default));
+        var start = DateTime.UtcNow.AddHours(1);
+        Done(await hospital.Get<MakeEffective>().RunAsync(hospital.Physicist, new Effectiveness(draft.Id, approved.RowVersion, start), default));
+        var waiting = await hospital.ReviewedAsync(8250);
+
+        await using var later = Wire(hospital.ConnectionString, clock: new FakeTimeProvider(DateTimeOffset.UtcNow.AddHours(2)));
+        var refused = Refused<Outcomes.Conflict>(await later.GetRequiredService<ApproveChangeRequest>().RunAsync(
+            hospital.Physicist, new Approval(waiting.Id, waiting.RowVersion, Passphrase), default));
+        Assert.Contains("came into force", refused.Detail, StringComparison.Ordinal);
+        Done(await hospital.Get<WithdrawChangeRequest>().RunAsync(hospital.Technologist, new ReasonedStep(waiting.Id, waiting.RowVersion, "enough"), default));
     }
 
     [Fact]

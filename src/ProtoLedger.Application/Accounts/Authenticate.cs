@@ -34,6 +34,8 @@ public sealed class Authenticate(ITransactions transactions, AccountOptions opti
             cancellationToken);
         if (token is null || account is null || account.Disabled || token.EndedAt is not null || token.ExpiresAt <= now)
             return null;
+        if (account.Demo && !options.DemoAccounts)
+            return null;
         var session = token.Kind == "session";
         if (session && token.LastUsedAt + options.IdleLimit <= now)
             return null;

@@ -1,4 +1,3 @@
-using System.Text;
 using Microsoft.AspNetCore.Identity;
 using ProtoLedger.Application.Outcomes;
 
@@ -38,15 +37,12 @@ public sealed class Passwords
             : null;
     }
 
-    /// <summary>Hash of a password, to be stored.</summary>
-    internal string Hash(string password) => hasher.HashPassword("", Normalised(password));
+    /// <summary>Hash of a password, taken as typed, to be stored.</summary>
+    internal string Hash(string password) => hasher.HashPassword("", password);
 
     /// <summary>True when it is the password; without a stored hash as much time is spent.</summary>
     internal bool Verify(string? stored, string password) =>
-        hasher.VerifyHashedPassword("", stored ?? decoy.Value, Normalised(password)) != PasswordVerificationResult.Failed && stored is not null;
-
-    /// <summary>NFC, so that the same keys give the same bytes on every keyboard.</summary>
-    private static string Normalised(string password) => password.Normalize(NormalizationForm.FormC);
+        hasher.VerifyHashedPassword("", stored ?? decoy.Value, password) != PasswordVerificationResult.Failed && stored is not null;
 
     private static string Normal(string text) => new([.. text.ToLowerInvariant().Where(char.IsLetterOrDigit)]);
 

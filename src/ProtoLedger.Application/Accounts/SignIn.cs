@@ -58,7 +58,7 @@ public sealed class SignIn(
         var account = await stores.Accounts.FindAsync(name, forUpdate: true, cancellationToken);
         if (account?.LockedUntil is { } until && until > now)
             return new LockedOut("The account is locked after failed attempts.", until);
-        if (account is null || !good || account.Disabled || !secondFactor.Accepts(account, code, now, out var step))
+        if (account is null || !good || account.Disabled || (account.Demo && !options.DemoAccounts) || !secondFactor.Accepts(account, code, now, out var step))
             return new Unauthenticated("Name, password or code are wrong.");
         await stores.Accounts.UpdateAsync(account with { FailedAttempts = 0, LockedUntil = null, TotpStep = step }, cancellationToken);
         var secret = Secrets.New(session: true);

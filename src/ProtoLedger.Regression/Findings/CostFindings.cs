@@ -54,9 +54,14 @@ internal static class CostFindings
                 old,
                 now,
                 "",
-                suppressed ? "brightness ratio; darker is better" : "brightness ratio; farther from 1 is better");
+                RatioNote(suppressed, old, now));
         }
     }
+
+    /// <summary>What makes a ratio better or worse; a pair that changes places is told apart otherwise, however far from 1 it is.</summary>
+    private static string RatioNote(bool suppressed, double old, double now) => suppressed ? "brightness ratio; darker is better"
+        : (old > 1) == (now > 1) ? "brightness ratio; farther from 1 is better"
+        : "brightness ratio; the pair has changed places: what was brighter is darker now";
 
     internal static IEnumerable<Finding> Findings(ScannerEvidence evidence, ProtocolSeries series)
     {

@@ -62,8 +62,8 @@ internal static class PairFindings
         // A pair that changes places reads differently even where it is told apart as well as before.
         var worse = suppressed ? now > old : after < before || (old > 1) != (now > 1);
         var rising = evidence.Rising(key);
-        // For a suppressed tissue brighter is worse; for a pair, nearer to equal.
-        var share = rising is not { } up ? (double?)null : (suppressed ? now > old : old < now) ? up : 1 - up;
+        // Of the plausible tissue values: how many move the way in which the nominal ones do.
+        var share = rising is not { } up ? (double?)null : now > old ? up : 1 - up;
         var attribution = evidence.Attribution(key);
         var text = suppressed ? Turns(subject, reference, old, now) : ToldApart(subject, reference, old, now);
         return new Finding(

@@ -20,6 +20,12 @@ internal sealed class DemoPeople(PrepareDemo prepare, KeepAccounts accounts, Enr
         var secrets = DemoSecrets.Choose(options, before);
         secrets.Write(options.DataFolder);
         var made = (await prepare.RunAsync(people, secrets.Password, secrets.Passphrase, cancellationToken)).Select(a => a.Name).ToHashSet();
+        var known = (await accounts.ListAsync(Caller.System, cancellationToken)).Value ?? [];
+        // A real account that happens to have such a name is nobody of the demonstration: it keeps its password and its key.
+        var demo = known.Where(account => account.Demo).Select(account => account.Name).ToHashSet();
+        people = [.. people.Where(person => demo.Contains(person.Name))];
+        if (people.Count == 0)
+            return [];
         foreach (var person in people.Where(p => !made.Contains(p.Name)))
             await RenewAsync(person, secrets, before, cancellationToken);
         var width = people.Max(p => p.Name.Length);

@@ -35,7 +35,7 @@ internal sealed class FirstStart(PrepareSite site, ImportStore import, DemoPeopl
             throw new StartupException(Describe(imported.Refusal));
         if (!options.ServesWeb)
             return [];
-        return options.Demo ?? database.Cluster is not null
+        return options.ShowsDemo(database)
             ? await demo.PrepareAsync(Store, cancellationToken)
             : ["people sign in with accounts of this site; the first administrator is made with: protoledger add-administrator NAME"];
     }

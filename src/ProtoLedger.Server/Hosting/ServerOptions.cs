@@ -53,5 +53,8 @@ internal sealed class ServerOptions
     public bool Works => Role is "worker" or "all";
 
     /// <summary>An empty setting, as compose files make them, says nothing.</summary>
+    /// <summary>Whether people of the demonstration are there: as set, else on the private cluster only.</summary>
+    public bool ShowsDemo(DatabaseAccess database) => Demo ?? database.Cluster is not null;
+
     private static string? Filled(string? value) => string.IsNullOrEmpty(value) ? null : value;
 }

@@ -22,7 +22,14 @@ internal readonly record struct Body<T>(T Value)
         var errors = JsonShape.Check(tree, options.GetTypeInfo(typeof(T)), options);
         if (errors.Count > 0)
             throw new ProblemException(Problems.Malformed($"{errors.Count} field(s) of the body do not have the shape asked for.", errors));
-        return new Body<T>(tree.Deserialize<T>(options)!);
+        try
+        {
+            return new Body<T>(tree.Deserialize<T>(options)!);
+        }
+        catch (JsonException fault)
+        {
+            throw new ProblemException(Problems.Malformed($"The body cannot be read at {fault.Path}: {fault.Message}"));
+        }
     }
 
     private static async Task<JsonNode?> ReadAsync(HttpRequest request)

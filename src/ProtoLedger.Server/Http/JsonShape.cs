@@ -95,7 +95,8 @@ internal static class JsonShape
         {
             _ when type.IsEnum => (kind == JsonValueKind.String && Enum.GetNames(type).Any(n => JsonNamingPolicy.CamelCase.ConvertName(n) == node.GetValue<string>()),
                 "one of " + string.Join(", ", Enum.GetNames(type).Select(JsonNamingPolicy.CamelCase.ConvertName))),
-            TypeCode.Int32 or TypeCode.Int64 => (kind == JsonValueKind.Number && IsWhole(node), "a whole number"),
+            TypeCode.Int32 => (kind == JsonValueKind.Number && IsWhole(node) && Math.Abs(node.GetValue<double>()) <= int.MaxValue, "a whole number of at most 2,147,483,647"),
+            TypeCode.Int64 => (kind == JsonValueKind.Number && IsWhole(node), "a whole number"),
             TypeCode.Double => (kind == JsonValueKind.Number, "a number"),
             TypeCode.Boolean => (kind is JsonValueKind.True or JsonValueKind.False, "true or false"),
             TypeCode.String => (kind == JsonValueKind.String, "a text"),

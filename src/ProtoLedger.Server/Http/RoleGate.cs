@@ -76,7 +76,8 @@ internal sealed class RoleGate(RequestDelegate next)
                 _ => $"Needed is one of the roles {string.Join(", ", rule.AllowedRoles)}; {actor.Name} has {string.Join(", ", actor.Roles)}.",
             });
 
-    private static string? BearerToken(HttpRequest request) =>
+    /// <summary>The token of the header Authorization; null without one.</summary>
+    internal static string? BearerToken(HttpRequest request) =>
         AuthenticationHeaderValue.TryParse(request.Headers[HeaderNames.Authorization], out var header)
         && header.Scheme.Equals("Bearer", StringComparison.OrdinalIgnoreCase) ? header.Parameter ?? "" : null;
 

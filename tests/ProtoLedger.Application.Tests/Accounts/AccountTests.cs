@@ -27,6 +27,16 @@ public sealed class AccountTests(Hospital hospital) : IClassFixture<Hospital>
     }
 
     [Fact]
+    public async Task SignIn_PersonOfTheDemonstrationWhereThereIsNone_IsRefusedAndTheOldSessionEnds()
+    {
+        var session = Done(await hospital.Get<SignIn>().RunAsync(new Caller(Actor.Anonymous), new Credentials("v.osei", Password), default));
+        await using var services = Wire(hospital.ConnectionString, accounts: AccountOptions.Default with { DemoAccounts = false });
+        Assert.Null(await Get<Authenticate>(services).RunAsync(session.Token, default));
+        Refused<Unauthenticated>(await Get<SignIn>(services).RunAsync(new Caller(Actor.Anonymous), new Credentials("v.osei", Password), default));
+        Assert.NotNull(await hospital.Get<Authenticate>().RunAsync(session.Token, default));
+    }
+
+    [Fact]
     public async Task Session_UsedAllDay_EndsAtItsAbsoluteLimit()
     {
         var clock = new FakeTimeProvider(DateTimeOffset.UtcNow);

@@ -65,11 +65,12 @@ public sealed class Hospital : DatabaseFixture
     }
 
     /// <summary>Wires the use cases to a database.</summary>
-    internal static ServiceProvider Wire(string connectionString, StatementFaults? faults = null, TimeProvider? clock = null) =>
+    internal static ServiceProvider Wire(
+        string connectionString, StatementFaults? faults = null, TimeProvider? clock = null, AccountOptions? accounts = null) =>
         new ServiceCollection()
             .AddSingleton(clock ?? TimeProvider.System)
             .AddLogging(logging => logging.AddConsole().SetMinimumLevel(LogLevel.Error))
-            .AddProtoLedgerApplication(new SiteOptions("Test hospital", "test.example/log", new byte[32]))
+            .AddProtoLedgerApplication(new SiteOptions("Test hospital", "test.example/log", new byte[32]), accounts)
             .AddProtoLedgerStorage(connectionString, faults)
             .BuildServiceProvider();
 

@@ -11,6 +11,9 @@ public class DemoServerFixture : StoreServerFixture
     protected override bool Works => true;
 
     /// <inheritdoc/>
+    protected override bool Demo => true;
+
+    /// <inheritdoc/>
     public override async ValueTask InitializeAsync()
     {
         await base.InitializeAsync();

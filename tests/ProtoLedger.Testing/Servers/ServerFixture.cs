@@ -51,13 +51,16 @@ public class ServerFixture : DatabaseFixture
     /// <summary>Whether workers run beside the server; without them no regression run is carried out.</summary>
     protected virtual bool Works => false;
 
+    /// <summary>Whether people of the demonstration may sign in.</summary>
+    protected virtual bool Demo => false;
+
     /// <inheritdoc/>
     public override async ValueTask InitializeAsync()
     {
         await base.InitializeAsync();
         Directory.CreateDirectory(folder);
         var builder = ServerApplication.CreateBuilder(
-            ["--urls", "http://127.0.0.1:0", "--role", Works ? "all" : "web", $"--ConnectionStrings:ProtoLedger={ConnectionString}", $"--ProtoLedger:DataFolder={folder}"]);
+            ["--urls", "http://127.0.0.1:0", "--role", Works ? "all" : "web", $"--ConnectionStrings:ProtoLedger={ConnectionString}", $"--ProtoLedger:DataFolder={folder}", $"--ProtoLedger:Demo={Demo}"]);
         builder.Logging.ClearProviders();
         Configure(builder.Services);
         var options = ServerApplication.ReadOptions(builder);

@@ -1,5 +1,4 @@
 using System.ComponentModel.DataAnnotations;
-using System.Net.Http.Headers;
 using Microsoft.AspNetCore.Http.HttpResults;
 using ProtoLedger.Application.Accounts;
 using ProtoLedger.Application.Actors;
@@ -30,8 +29,9 @@ internal static class SessionEndpoints
 
     private static async Task<Results<NoContent, Problem>> SignOutAsync(HttpContext context, Caller caller, SignOut useCase, CancellationToken cancellationToken)
     {
-        var token = AuthenticationHeaderValue.Parse(context.Request.Headers.Authorization.ToString()).Parameter!;
-        var outcome = await useCase.RunAsync(caller, token, cancellationToken);
+        // The gate took whoever asks from the one or the other.
+        var secret = RoleGate.BearerToken(context.Request) ?? SessionCookie.Read(context.Request) ?? "";
+        var outcome = await useCase.RunAsync(caller, secret, cancellationToken);
         return outcome.Succeeded ? TypedResults.NoContent() : Problems.From(outcome.Refusal);
     }
 }

@@ -74,11 +74,13 @@ public sealed class VoxelTests
             Timing = new SeriesTiming(Trigger: SeriesTrigger.Cardiac, HeartRate: new RateRange(50, 75)),
         };
 
-        var both = TriggeredSeries.OverRates(series);
+        var (shortest, longest) = RepetitionPeriod.Range(series);
 
-        Assert.Equal([800, 1200], both.Select(s => s.Readout.RepetitionTime));
-        Assert.True(Signed(both[1], Lane(1200, 50)) > Signed(both[0], Lane(1200, 50)));
-        Assert.Equal(series with { Timing = new SeriesTiming() }, TriggeredSeries.OverRates(series with { Timing = new SeriesTiming() }).Single());
+        Assert.Equal((800.0, 1200.0), (shortest, longest));
+        Assert.Equal((800.0, 800.0), RepetitionPeriod.Range(series with { Timing = new SeriesTiming() }));
+        Assert.True(Signed(At(longest), Lane(1200, 50)) > Signed(At(shortest), Lane(1200, 50)));
+
+        Series At(double repetition) => series with { Readout = series.Readout with { RepetitionTime = repetition } };
     }
 
     /// <summary>Spectral pulses recur once per slice: with more slices the fat of a slice is saturated more often and lower (derived: shorter recovery).</summary>

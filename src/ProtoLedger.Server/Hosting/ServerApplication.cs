@@ -2,6 +2,7 @@ using Microsoft.Extensions.DependencyInjection.Extensions;
 using Microsoft.Extensions.FileProviders;
 using Microsoft.Extensions.Options;
 using ProtoLedger.Application;
+using ProtoLedger.Application.Accounts;
 using ProtoLedger.Application.Site;
 using ProtoLedger.Protocols.Canonical;
 using ProtoLedger.Server.Features.Accounts;
@@ -73,7 +74,9 @@ internal static class ServerApplication
         services.TryAddSingleton(TimeProvider.System);
         services.AddSingleton<Readiness>();
         services.AddProtoLedgerStorage(database.ConnectionString);
-        services.AddProtoLedgerApplication(new SiteOptions(options.SiteName, options.Origin, SealingKeyFile.Read(options.SealingKeyFile ?? Path.Combine(options.DataFolder, SealingKeyFile.UsualName))));
+        services.AddProtoLedgerApplication(
+            new SiteOptions(options.SiteName, options.Origin, SealingKeyFile.Read(options.SealingKeyFile ?? Path.Combine(options.DataFolder, SealingKeyFile.UsualName))),
+            AccountOptions.Default with { DemoAccounts = options.ShowsDemo(database) });
         services.AddSingleton(options);
         services.AddSingleton<FirstStart>();
         services.AddSingleton<DemoPeople>();
@@ -106,11 +109,13 @@ internal static class ServerApplication
             app.MapChangeRequests();
             app.MapReports();
             app.MapDocuments();
+            app.MapLoadings();
             app.MapRuns();
             app.MapRunEvents();
             app.MapLedger();
             app.MapAudit();
             app.MapAccounts();
+            app.MapOwnAccount();
             app.MapBundles();
             app.MapApiDescription();
             app.MapProblemPages();

@@ -54,6 +54,8 @@ internal static class ServerApplication
         });
         builder.Logging.AddFilter("Microsoft.AspNetCore", LogLevel.Warning);
         builder.Logging.AddFilter("Microsoft.Hosting.Lifetime", LogLevel.Warning);
+        // The keys of forms lie in the data folder beside the sealing key, under the same protection.
+        builder.Logging.AddFilter("Microsoft.AspNetCore.DataProtection", LogLevel.Error);
         builder.Logging.AddSimpleConsole(console => console.SingleLine = true);
         return builder;
     }

@@ -10,7 +10,7 @@ internal sealed class ProposeScreen(IPage page)
 
     public ILocator NullingOffer => Live.GetByRole(AriaRole.Button);
 
-    public ILocator Submit => page.GetByRole(AriaRole.Button, new() { Name = "Propose and submit for review" });
+    public ILocator Submit => page.GetByRole(AriaRole.Button, new() { Name = "Submit for review" });
 
     public ILocator Draft => page.GetByRole(AriaRole.Button, new() { Name = "Keep as a draft" });
 

@@ -105,7 +105,8 @@ internal sealed class ProposeModel(ReadDocuments read, CreateChangeRequest creat
         }
 
         var tree = JsonNode.Parse(stored)!;
-        Groups = [.. DocumentRows.Of(Key.Kind, stored).Select(group => new FieldGroup(
+        // The series of a protocol come before its text: they are what is edited most.
+        Groups = [.. DocumentRows.Of(Key.Kind, stored).OrderBy(group => Key.Kind == DocumentKind.Protocol && group.Pointer.Length == 0).Select(group => new FieldGroup(
             group.Title,
             group.Pointer.StartsWith("/series/", StringComparison.Ordinal) ? tree["series"]![int.Parse(group.Pointer["/series/".Length..], CultureInfo.InvariantCulture)]!.ToJsonString() : null,
             [.. group.Rows.Where(row => !row.Pointer.EndsWith("/kind", StringComparison.Ordinal)).Select(Field)]))];

@@ -104,7 +104,7 @@
     if (time === null || String(time) === input.value) return;
     const button = document.createElement('button');
     button.type = 'button';
-    button.textContent = `Set the inversion time to ${time} ms: nulls ${dark.replaceAll('-', ' ')} at these values`;
+    button.textContent = `Set the inversion time to ${time} ms, which nulls ${dark.replaceAll('-', ' ')}`;
     button.addEventListener('click', () => { input.value = String(time); input.dispatchEvent(new Event('input', { bubbles: true })); input.focus(); });
     live.append(button);
   }

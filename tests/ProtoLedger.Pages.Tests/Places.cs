@@ -23,7 +23,7 @@ internal static class Places
         [
             ("today", "/"), ("protocols", "/protocols"), ("sheet", "/protocols/brain-standard"), ("history", "/protocols/brain-standard/history?from=1&to=2"),
             ("why", "/protocols/brain-standard/7/why?pointer=/series/0/preparations/0/InversionTime"), ("requests", "/requests"), ("request", $"/requests/{request}"),
-            ("runs", "/runs"), ("run", "/runs/1"), ("compare", "/runs/compare?from=1&to=1"), ("effective", "/effective"), ("references", "/references"), ("catalogue", "/catalogues/tissues"),
+            ("runs", "/runs"), ("run", "/runs/2"), ("compare", "/runs/compare?from=1&to=2"), ("effective", "/effective"), ("references", "/references"), ("catalogue", "/catalogues/tissues"),
         ];
         foreach (var page in all)
             yield return page;

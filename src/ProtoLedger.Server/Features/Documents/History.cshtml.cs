@@ -1,7 +1,9 @@
 using Microsoft.AspNetCore.Mvc;
 using ProtoLedger.Application.Actors;
+using ProtoLedger.Application.Bundles;
 using ProtoLedger.Application.Documents;
 using ProtoLedger.Protocols.Comparison;
+using ProtoLedger.Protocols.Documents;
 using ProtoLedger.Server.Http;
 
 namespace ProtoLedger.Server.Features.Documents;
@@ -14,6 +16,9 @@ internal sealed class HistoryModel(ReadDocuments useCase) : LedgerPage
     public string Folder { get; private set; } = "";
 
     public DocumentKey Key { get; private set; }
+
+    /// <summary>The binder is for one protocol.</summary>
+    public bool MayTakeBinder => Key.Kind == DocumentKind.Protocol && ExportBundle.Rule.Allows(Actor);
 
     public int? From { get; private set; }
 

@@ -26,6 +26,9 @@ internal static class ApiDescription
         routes.MapScalarApiReference("/api", options => options
                 .WithTitle("ProtoLedger API")
                 .DisableDefaultFonts()
+                .DisableAgent()
+                .DisableMcp()
+                .DisableTelemetry()
                 .WithOpenApiRoutePattern("/openapi/v1.json"))
             .Needs(RoleRule.Anyone)
             // The page starts itself with an inline script and styles its parts inline; it loads nothing from elsewhere.

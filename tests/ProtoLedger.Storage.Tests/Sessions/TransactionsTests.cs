@@ -15,7 +15,7 @@ public sealed class TransactionsTests(DatabaseFixture database) : IClassFixture<
         var transactions = new Transactions(source);
         await Task.WhenAll(Enumerable.Range(0, 3).Select(_ => transactions.ReadAsync(stores => stores.Documents.CountAsync(default), default)));
         await using (var kill = database.Source.CreateCommand(
-            "SELECT count(pg_terminate_backend(pid)) FROM pg_stat_activity WHERE datname = current_database() AND application_name = 'protoledger'"))
+            "SELECT count(pg_terminate_backend(pid)) FROM pg_stat_activity WHERE datname = current_database() AND application_name = 'protoledger' AND pid <> pg_backend_pid()"))
             await kill.ExecuteScalarAsync();
         for (var i = 0; i < 3; i++)
             Assert.Equal(0, await transactions.ReadAsync(stores => stores.Documents.CountAsync(default), default));

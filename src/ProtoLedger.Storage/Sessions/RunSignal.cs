@@ -7,6 +7,7 @@ namespace ProtoLedger.Storage.Sessions;
 internal sealed class RunSignal(NpgsqlDataSource source) : IRunSignal, IAsyncDisposable
 {
     private readonly SemaphoreSlim one = new(1);
+    private readonly CancellationTokenSource ended = new();
     private NpgsqlConnection? listening;
 
     public async Task WaitAsync(TimeSpan limit, CancellationToken cancellationToken)
@@ -16,15 +17,16 @@ internal sealed class RunSignal(NpgsqlDataSource source) : IRunSignal, IAsyncDis
             return;
         try
         {
+            using var either = CancellationTokenSource.CreateLinkedTokenSource(cancellationToken, ended.Token);
             if (listening is null)
             {
-                listening = await source.OpenConnectionAsync(cancellationToken);
+                listening = await source.OpenConnectionAsync(either.Token);
                 await using var listen = new NpgsqlCommand("LISTEN protoledger_job", listening);
-                await listen.ExecuteNonQueryAsync(cancellationToken);
+                await listen.ExecuteNonQueryAsync(either.Token);
                 return;
             }
 
-            await listening.WaitAsync(limit, cancellationToken);
+            await listening.WaitAsync(limit, either.Token);
         }
         catch (NpgsqlException)
         {
@@ -39,8 +41,12 @@ internal sealed class RunSignal(NpgsqlDataSource source) : IRunSignal, IAsyncDis
 
     public async ValueTask DisposeAsync()
     {
+        // Whoever still waits lets go of the connection first: one that is in use cannot be closed.
+        await ended.CancelAsync();
+        await one.WaitAsync();
         await DropAsync();
         one.Dispose();
+        ended.Dispose();
     }
 
     private async Task DropAsync()

@@ -80,7 +80,11 @@ public class ServerFixture : DatabaseFixture
         foreach (var client in clients.Values)
             client.Dispose();
         if (App is not null)
+        {
+            await App.StopAsync();
             await App.DisposeAsync();
+        }
+
         await base.DisposeAsync();
         Directory.Delete(folder, recursive: true);
     }

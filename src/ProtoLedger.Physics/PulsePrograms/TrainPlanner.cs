@@ -135,17 +135,7 @@ internal sealed class TrainPlanner(PulseStep[] steps, PlanTables tables, bool pr
                     for (var k = 0; k < Orders; k++)
                         if (form.Any(k) && reachable[i].Any(k))
                             alive.Add(k);
-                    SetRange(ref span, alive, dephasings);
-                    for (var k = 0; alive.Count > 0 && k < span.Count; k++)
-                    {
-                        var order = alive[0] + k * span.Stride;
-                        if (!form.P[order])
-                            AddZero(spans, ref span, p: SlotP(dephasings, order));
-                        if (!form.M[order])
-                            AddZero(spans, ref span, m: SlotM(dephasings, order));
-                        if (!form.Z[order])
-                            AddZero(spans, ref span, z: order);
-                    }
+                    Cover(spans, ref span, alive, dephasings, form);
 
                     form = new OrderSets(Orders);
                     for (var k = 0; k < span.Count; k++)
@@ -208,18 +198,9 @@ internal sealed class TrainPlanner(PulseStep[] steps, PlanTables tables, bool pr
                     for (var k = 0; k < Orders; k++)
                         if (reachable[i].Any(k) && needed[i + 1].Any(k))
                             alive.Add(k);
-                    SetRange(ref pulse, alive, dephasings);
-                    for (var k = 0; alive.Count > 0 && k < pulse.Count; k++)
-                    {
-                        var order = alive[0] + k * pulse.Stride;
-                        if (!valid.P[order])
-                            AddZero(spans, ref pulse, p: SlotP(dephasings, order));
-                        if (!valid.M[order])
-                            AddZero(spans, ref pulse, m: SlotM(dephasings, order));
-                        if (!valid.Z[order])
-                            AddZero(spans, ref pulse, z: order);
-                        valid.Set(order);
-                    }
+                    Cover(spans, ref pulse, alive, dephasings, valid);
+                    for (var k = 0; k < pulse.Count; k++)
+                        valid.Set(alive[0] + k * pulse.Stride);
 
                     pulse.Angle = steps[i].Slot;
                     pulse.Pair = tables.Pair(steps[i].Slot, IntervalAfter(i));
@@ -273,6 +254,22 @@ internal sealed class TrainPlanner(PulseStep[] steps, PlanTables tables, bool pr
     }
 
     private bool IsLastPulse(int position) => Array.FindIndex(steps, position + 1, s => s.Kind == StepKind.Refocus) < 0;
+
+    /// <summary>Lets a pulse act on a regular range of orders that holds all of <paramref name="alive"/>; states in it that nothing filled yet start at zero.</summary>
+    private void Cover(List<PulseSpan> spans, ref PulseSpan span, List<int> alive, int dephasings, OrderSets filled)
+    {
+        SetRange(ref span, alive, dephasings);
+        for (var k = 0; k < span.Count; k++)
+        {
+            var order = alive[0] + k * span.Stride;
+            if (!filled.P[order])
+                AddZero(spans, ref span, p: SlotP(dephasings, order));
+            if (!filled.M[order])
+                AddZero(spans, ref span, m: SlotM(dephasings, order));
+            if (!filled.Z[order])
+                AddZero(spans, ref span, z: order);
+        }
+    }
 
     private void SetRange(ref PulseSpan span, List<int> alive, int dephasings)
     {
